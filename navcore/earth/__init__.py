@@ -1,0 +1,1 @@
+"""Figures of the Earth, and latitudes and lengths on them."""

@@ -1,0 +1,1 @@
+"""Rhumb lines and great circles on any figure, in arrays."""

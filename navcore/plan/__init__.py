@@ -1,0 +1,1 @@
+"""The passage plan: the model, its edits, its solution and its quantities."""

@@ -1,0 +1,1 @@
+"""The leg table and the media it is printed in."""

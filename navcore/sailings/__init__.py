@@ -1,0 +1,1 @@
+"""The sailings as worked by tables, every step as data."""

@@ -1,0 +1,1 @@
+"""The terminal side of legbook: the command line and the workbook."""
