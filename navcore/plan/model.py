@@ -10,6 +10,7 @@ from typing import TYPE_CHECKING
 from navcore.earth.figure import WGS_84, Figure
 
 if TYPE_CHECKING:
+    from collections.abc import Mapping
     from datetime import datetime
 
     from navcore.position import Position
@@ -93,12 +94,16 @@ class PlanText:
         between: Blocks that are no waypoint's but stand after the first one, as (waypoint blocks before it, text).
         newline: "\n" or "\r\n".
         bom: Whether the file began with a byte order mark.
+        end: What follows the last line of the last block; kept apart, so that blocks can change places.
+        as_read: What each waypoint block says, so that none has to be read again to see whether it still does.
     """
 
     head: str = ""
     between: tuple[tuple[int, str], ...] = ()
     newline: str = "\n"
     bom: bool = False
+    end: str = "\n"
+    as_read: Mapping[str, tuple[Waypoint, Leg]] = field(default_factory=dict, compare=False, repr=False)
 
 
 @dataclass(frozen=True, slots=True)
