@@ -20,7 +20,12 @@ def legbook(*words: str, stdin: bytes = b"", env: dict[str, str] | None = None) 
     """Run the command line in a process of its own."""
     environment = {**os.environ, "PYTHONPATH": str(ROOT), **(env or {})}
     return subprocess.run(
-        [sys.executable, "-m", "tui", *words], input=stdin, capture_output=True, check=False, env=environment, timeout=60
+        [sys.executable, "-m", "tui", *words],
+        input=stdin,
+        capture_output=True,
+        check=False,
+        env=environment,
+        timeout=60,
     )
 
 
