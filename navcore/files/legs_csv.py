@@ -5,15 +5,17 @@ A row is read on its own, so that a file of any length can be taken as a stream.
 
 from __future__ import annotations
 
-import math
+import re
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
 import numpy as np
 
+from navcore.angles import wrap_180
 from navcore.constants import METRES_PER_NAUTICAL_MILE
-from navcore.errors import NavError, ParseError, RangeError
+from navcore.errors import NavError, ParseError
 from navcore.lines import great_circle, rhumb_line
+from navcore.text.plain import visible
 from navcore.text.position import parse_position
 
 if TYPE_CHECKING:
@@ -27,6 +29,8 @@ RESULTS = ("rl_course_deg", "rl_distance_nmi", "gc_initial_course_deg", "gc_fina
 _DEGREES = ("lat1", "lon1", "lat2", "lon2")
 _PLACES = ("from", "to")
 _LIMITS_DEG = (90.0, 180.0, 90.0, 180.0)
+_TURN_DEG = 360.0
+_NUMBER = re.compile(r"[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d{1,3})?", re.ASCII)
 
 Ends = tuple[float, float, float, float]
 
@@ -42,10 +46,17 @@ class LegColumns:
     Attributes:
         headings: Every heading of the file.
         indexes: Four of degrees or two of places.
+        old_results: Where results stand already, of an earlier run.
     """
 
     headings: tuple[str, ...]
     indexes: tuple[int, ...]
+    old_results: tuple[int, ...]
+
+    def kept(self, row: Sequence[str]) -> list[str]:
+        """Return a row as it is copied: filled to the headings, without the results of an earlier run."""
+        filled = [*row, *[""] * (len(self.headings) - len(row))]
+        return [cell for index, cell in enumerate(filled) if index not in self.old_results]
 
     def ends(self, row: Sequence[str]) -> Ends:
         """Return lat1, lon1, lat2, lon2 of a row in degrees.
@@ -53,7 +64,7 @@ class LegColumns:
         Raises:
             NavError: The row can't be read; the message names the column, what is allowed and what to do.
         """
-        if len(row) != len(self.headings):
+        if not max(self.indexes) < len(row) <= len(self.headings):
             cells = f"{len(row)} cells under {len(self.headings)} headings"
             raise ParseError(",".join(row), (0, 0), cells, "give each heading a cell, quoted where it holds a comma")
         if len(self.indexes) == len(_PLACES):
@@ -72,14 +83,17 @@ class LegColumns:
             raise ParseError(error.text, (error.start, error.end), reason, error.advice) from error
 
     def _degrees(self, row: Sequence[str], index: int, limit_deg: float) -> float:
-        cell = row[index]
-        try:
-            value_deg = float(cell)
-        except ValueError:
+        cell = row[index].strip()
+        span = (0, len(cell))
+        if not _NUMBER.fullmatch(cell):
             reason = f"{self.headings[index]}: {cell[:40]!r} is no number"
-            raise ParseError(cell, (0, len(cell)), reason, "type decimal degrees such as -4.4833") from None
-        if not math.fabs(value_deg) <= limit_deg:
-            raise RangeError(self.headings[index], value_deg, f"-{limit_deg:g} to {limit_deg:g} degrees")
+            raise ParseError(cell, span, reason, "type decimal degrees such as -4.4833")
+        value_deg = float(cell)
+        if abs(value_deg) > limit_deg:
+            reason = f"{self.headings[index]}: {cell[:40]} is outside -{limit_deg:g} to {limit_deg:g} degrees"
+            is_turn = limit_deg == 180.0 and abs(value_deg) <= _TURN_DEG
+            advice = f"type {wrap_180(value_deg):.15g}" if is_turn else "latitude comes first, longitude second"
+            raise ParseError(cell, span, reason, advice)
         return value_deg
 
 
@@ -92,8 +106,9 @@ def leg_columns(headings: Sequence[str]) -> LegColumns:
     plain = [heading.strip().lower() for heading in headings]
     for wanted in (_DEGREES, _PLACES):
         if all(plain.count(name) == 1 for name in wanted):
-            return LegColumns(tuple(headings), tuple(plain.index(name) for name in wanted))
-    found = ", ".join(headings)[:200] or "nothing"
+            old_results = tuple(plain.index(name) for name in RESULTS if name in plain)
+            return LegColumns(tuple(headings), tuple(plain.index(name) for name in wanted), old_results)
+    found = visible(", ".join(headings)[:200]) or "nothing"
     message = (
         f"the first row holds {found}; allowed: lat1,lon1,lat2,lon2 in decimal degrees, or from,to in any position "
         "form, each once; give the file such a heading row"

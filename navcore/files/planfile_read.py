@@ -23,7 +23,7 @@ from navcore.files.planfile_tables import (
 from navcore.files.toml_source import Source, Table, forbidden_characters, load, syntax_problem
 from navcore.files.toml_syntax import Fault, shorten
 from navcore.files.toml_text import scan
-from navcore.plan.model import Leg, Plan, PlanText, Waypoint
+from navcore.plan.model import Leg, Line, Plan, PlanText, Waypoint
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator
@@ -248,7 +248,7 @@ class _PlanReader:
         return PlanText(head, tuple(between), self._newline(), self.bom, split_end(text)[1], as_read)
 
     def _doubtful(self, plan: Plan) -> Iterator[Problem]:
-        """Return a warning for each name that stands at two positions, and for notes in no column."""
+        """Return a warning for each name that stands at two positions, and for choices that a leg makes no use of."""
         blocks = [block for block in self.blocks if block.is_waypoint]
         first: dict[str, int] = {}
         for number, (waypoint, block) in enumerate(zip(plan.waypoints, blocks, strict=True)):
@@ -259,10 +259,24 @@ class _PlanReader:
                 fault = Fault(what, "any name", "give one of the two another name if they are two places")
                 yield self.source.problem(block.sections[0].header, fault)
         for leg, block in zip(plan.legs, blocks[1:], strict=True):
-            stray = [column for column, _ in leg.notes if column not in plan.columns]
-            table = Table(self.source, block.sections if stray else (), 1, WAYPOINT_KEYS)
-            for column in stray:
-                what = f"the note {shorten(column)} is in no column of the plan; it is kept but not printed"
-                allowed = ", ".join(plan.columns) or "no columns"
-                fault = Fault(what, allowed, "add it to columns in the head of the file")
-                yield self.source.problem(table.key_offset("notes", column), fault)
+            for path, fault in (*_idle_choices(plan.line_of(leg), leg), *_stray_notes(plan, leg)):
+                table = Table(self.source, block.sections, 1, WAYPOINT_KEYS)
+                yield self.source.problem(table.key_offset(*path), fault)
+
+
+def _stray_notes(plan: Plan, leg: Leg) -> Iterator[tuple[tuple[str, str], Fault]]:
+    """Yield the notes that stand in none of the columns that a plan lists, where it lists any."""
+    for column in (column for column, _ in leg.notes if plan.columns and column not in plan.columns):
+        what = f"the note {shorten(column)} is in no column that the plan lists; it is printed beneath the leg"
+        listed = ", ".join(map(shorten, plan.columns))
+        yield ("notes", column), Fault(what, listed, "add it to columns in the head of the file, or mend its name")
+
+
+def _idle_choices(line: Line, leg: Leg) -> Iterator[tuple[tuple[str], Fault]]:
+    """Yield the keys of a leg's block that its line makes no use of, and what is to be said of each."""
+    if leg.limit_deg is not None and line is not Line.COMPOSITE:
+        what = f"this leg is a {line.value}, which keeps to no limit"
+        yield ("limit",), Fault(what, "a limit with a composite", 'type line = "composite", or take the limit out')
+    if leg.parts is not None and line is Line.RHUMB:
+        what = "this leg is a rhumb line, which is steered whole"
+        yield ("parts",), Fault(what, "parts with a great circle or composite", "give its line, or take the parts out")

@@ -45,10 +45,12 @@ def write_whole(path: Path | str, data: bytes) -> None:
     try:
         _write_new(temporary, data, mode)
         temporary.replace(target)
-    except BaseException:
+    except BaseException as error:
         # Whatever stops it, an interrupt too: nothing half-written stays behind.
         with contextlib.suppress(OSError):
             temporary.unlink()
+        if isinstance(error, OSError):
+            raise OSError(error.errno, error.strerror, str(path)) from error
         raise
     _sync_folder(target.parent)
 

@@ -8,6 +8,7 @@ from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.plan.model import Line
 from navcore.sailings.parts import format_parts
 from navcore.sailings.track import Piece, Track
+from navcore.text.direction import format_direction
 from navcore.text.distance import format_distance
 from navcore.text.position import format_latitude, format_longitude, format_position
 
@@ -40,12 +41,19 @@ def steering_words(leg: SailedLeg) -> str:
     if leg.line is Line.RHUMB or leg.course_deg is None:
         return ""
     if leg.parts is None:
-        return SPLIT_FIRST
+        return "" if is_one_course(leg) else SPLIT_FIRST
     apart = format_distance(leg.parts.greatest_separation_m / METRES_PER_NAUTICAL_MILE, 2)
     count = len(leg.parts.distances_m)
     number = "1 part" if count == 1 else f"{count} parts"
     rule = format_parts(leg.parts.rule)
     return f"in {number} ({rule}): {_nmi(leg.parts.added_m)} added, at most {apart} from the true line"
+
+
+def is_one_course(leg: SailedLeg) -> bool:
+    """Say whether a great circle keeps one course as printed: along a meridian or the equator, or over a short way."""
+    worked = leg.worked
+    courses = (worked.rhumb_course_deg, worked.initial_course_deg, worked.final_course_deg)
+    return leg.line is Line.GREAT_CIRCLE and len({format_direction(course) for course in courses}) == 1
 
 
 def composite_words(leg: SailedLeg) -> str:

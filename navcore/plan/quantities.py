@@ -15,6 +15,7 @@ from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.plan.leg_words import composite_words, crossing_words, steering_words
 from navcore.plan.model import Line, Trade
 from navcore.plan.schedule import speed_of
+from navcore.sailings.ties import tie_words
 from navcore.text.direction import AVIATION_SIDES, MARINE_SIDES
 from navcore.text.distance import AVIATION_SPEED_UNIT
 from navcore.text.kind import FORMATTERS, UNITS, Kind
@@ -105,6 +106,12 @@ def _final_course_deg(solution: Solution, index: int) -> Value:
     return None if leg.line is Line.RHUMB else leg.end_course_deg
 
 
+def _ties(solution: Solution, index: int) -> Value:
+    start, end = (solution.plan.waypoints[at].position for at in (index, index + 1))
+    worked = solution.legs[index].worked
+    return tie_words(start, end, worked.initial_course_deg, worked.final_course_deg)
+
+
 def _saving_percent(solution: Solution, index: int) -> Value:
     worked = solution.legs[index].worked
     return 100.0 * worked.saving_m / worked.rhumb_distance_m if worked.rhumb_distance_m else None
@@ -166,6 +173,7 @@ _ALL = (
         "composite_track", Row.LEG, Kind.TEXT, "Composite", "Composite", lambda s, i: composite_words(s.legs[i]),
         "great circles that touch the limiting parallel, and the parallel between",
     ),
+    Quantity("ties", Row.LEG, Kind.TEXT, "Ties", "Ties", _ties, "which of two equal ways is taken"),
     Quantity(
         "crossings", Row.LEG, Kind.TEXT, "Crossings", "Crossings", crossing_words,
         "where what is sailed crosses the equator and 180°",
@@ -176,7 +184,8 @@ _ALL = (
     ),
     Quantity(
         "speed_kn", Row.LEG, Kind.SPEED, "Speed", "Speed", lambda s, i: speed_of(s.plan, s.plan.legs[i]),
-        "the leg's, else the plan's",    ),
+        "the leg's, else the plan's",
+    ),
     Quantity(
         "time_on_leg_s", Row.LEG, Kind.DURATION, "Time", "Time", lambda s, i: s.schedule.time_on_leg[i],
         "distance by speed",

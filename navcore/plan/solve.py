@@ -72,7 +72,8 @@ class WorkedLeg:
     @property
     def saving_m(self) -> float:
         """How much shorter the great circle is."""
-        return self.rhumb_distance_m - self.great_circle_distance_m
+        # Where both are one line, rounding could make it a hair less than nothing.
+        return max(0.0, self.rhumb_distance_m - self.great_circle_distance_m)
 
 
 @dataclass(frozen=True, slots=True)

@@ -61,7 +61,6 @@ LEG_TABLE: tuple[Column, ...] = (
     Column(("run_nmi",), 3),
     Column(("to_go_nmi",), 1),
     Column(("eta",), 1),
-    Column(("stay_s",), 4),
     Column(("line",), 1),
     Column(("course_deg", "final_course_deg"), 1),
     Column(("distance_nmi",), 1),
@@ -112,5 +111,5 @@ Of need 2 are those that stand on landscape paper only, of need 3 those that sta
 practice: the columns of training forms for passage plans, and those of an operational flight plan.
 """
 
-UNDER_THE_ROW: tuple[str, ...] = ("remarks", "composite_track", "steering", "crossings")
-"""Quantities of free length: on a line of their own under the row, where there is anything to say."""
+UNDER_THE_ROW: tuple[str, ...] = ("stay_s", "remarks", "composite_track", "steering", "ties", "crossings")
+"""Quantities of free length, or seldom there: on a line of their own under the row, where there is anything to say."""

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
+from datetime import timedelta
 from decimal import Decimal
 from typing import TYPE_CHECKING
 
@@ -13,6 +14,7 @@ from navcore.plan.revision import fingerprint
 from navcore.prints.caution import CAUTION
 from navcore.prints.columns import LEG_TABLE, UNDER_THE_ROW, Column
 from navcore.prints.part_rows import PartRow, part_rows
+from navcore.text.clock import parse_duration
 from navcore.text.kind import FORMATTERS, Kind
 from navcore.text.plain import visible
 
@@ -23,7 +25,7 @@ if TYPE_CHECKING:
     from navcore.plan.quantities import Quantity
     from navcore.plan.solve import Solution
 
-ROWS_ROUNDED = "rows rounded: the total is of the unrounded distances"
+ROWS_ROUNDED = "rows rounded: totals are of the unrounded distances and times"
 
 _LEFT = frozenset({Kind.TEXT, Kind.INSTANT, Kind.DIRECTION})
 """Kinds that are read from the left: a great circle's two courses begin where a rhumb line's one does."""
@@ -133,7 +135,7 @@ def method_line(plan: Plan) -> str:
     word = QUANTITIES["course_deg"].heading(plan.trade).lower()
     return (
         f"Rhumb lines and {circle} on the figure {plan.figure.name}; 1 NM = 1852 m; {word}s true, a great circle's "
-        f"initial → final. Positions: datum {plan.datum}. Times UTC."
+        f"initial → final. Positions: datum {visible(plan.datum)}. Times UTC."
     )
 
 
@@ -154,15 +156,15 @@ def refuse_unworked(solution: Solution) -> None:
 
 def leg_name(plan: Plan, index: int) -> str:
     """Return a leg's two ends in words; a waypoint without a name goes by its number."""
-    ends = (plan.waypoints[end].name or f"waypoint {end + 1}" for end in (index, index + 1))
+    ends = (visible(plan.waypoints[end].name) or f"waypoint {end + 1}" for end in (index, index + 1))
     return " to ".join(ends)
 
 
 def _title(plan: Plan) -> str:
     if plan.title or not plan.waypoints:
-        return plan.title or "Passage plan"
+        return visible(plan.title) or "Passage plan"
     ends = (plan.waypoints[0].name or "first waypoint", plan.waypoints[-1].name or "last waypoint")
-    return " to ".join(ends)
+    return visible(" to ".join(ends))
 
 
 def _particulars(plan: Plan) -> tuple[tuple[str, str], ...]:
@@ -175,7 +177,7 @@ def _particulars(plan: Plan) -> tuple[tuple[str, str], ...]:
         ("Departure", f"{FORMATTERS[Kind.INSTANT](plan.departure)} UTC" if plan.departure else ""),
         ("Revision", f"{plan.revision}, plan {fingerprint(plan)}"),
     )
-    return tuple((label, value) for label, value in pairs if value)
+    return tuple((label, visible(value)) for label, value in pairs if value)
 
 
 def _table_column(column: Column, trade: Trade) -> TableColumn:
@@ -211,12 +213,19 @@ def _row(
     typed: Sequence[Quantity],
 ) -> TableRow:
     cells = tuple(_cell(column, solution, index) for column in columns if column.row is row)
-    under = [quantity.shown(solution, index) for quantity in beneath if quantity.row is row]
+    under = [_said(quantity, solution, index) for quantity in beneath if quantity.row is row]
     own = ((quantity.marine, quantity.shown(solution, index)) for quantity in typed)
     under.append(" · ".join(f"{visible(column)}: {text}" for column, text in own if text))
     parts = solution.legs[index].parts if row is Row.LEG else None
     rows = () if parts is None else tuple(part_rows(parts, index + 1))
     return TableRow(row, cells, tuple(text for text in under if text), rows)
+
+
+def _said(quantity: Quantity, solution: Solution, index: int) -> str:
+    """Return what is said beneath a row; a figure says what it is, words say it themselves."""
+    shown = quantity.shown(solution, index)
+    speaks = quantity.kind is Kind.TEXT or not shown
+    return shown if speaks else f"{quantity.heading(solution.plan.trade).lower()} {shown}"
 
 
 def _cell(column: Column, solution: Solution, index: int) -> str:
@@ -242,9 +251,33 @@ def _total_shown(solution: Solution) -> str:
 
 
 def _rows_are_rounded(solution: Solution) -> bool:
-    printed = [QUANTITIES["distance_nmi"].shown(solution, index) for index in rows_of(Row.LEG, solution)]
-    return bool(printed) and sum(map(Decimal, printed)) != Decimal(_total_shown(solution))
+    """Say whether distances, times or a leg's parts as printed don't add up to what is printed for the whole."""
+    if not solution.legs:
+        return False
+    distances = [QUANTITIES["distance_nmi"].shown(solution, index) for index in rows_of(Row.LEG, solution)]
+    if not _add_up(distances, _total_shown(solution)) or _times_are_rounded(solution):
+        return True
+    return any(
+        leg.parts is not None
+        and not _add_up([part.figures["distance_nmi"] for part in part_rows(leg.parts, 1)], distance)
+        for leg, distance in zip(solution.legs, distances, strict=True)
+    )
+
+
+def _add_up(rows: Sequence[str], total: str) -> bool:
+    return sum(map(Decimal, rows)) == Decimal(total)
+
+
+def _times_are_rounded(solution: Solution) -> bool:
+    total = solution.schedule.time_so_far[-1]
+    stays = [waypoint.stay for waypoint in solution.plan.waypoints[1:-1]]
+    pieces = [*solution.schedule.time_on_leg, *stays]
+    if total is None:
+        return False
+    printed = (parse_duration(FORMATTERS[Kind.DURATION](piece)) for piece in pieces)
+    return sum(printed, timedelta()) != parse_duration(FORMATTERS[Kind.DURATION](total))
 
 
 def _signatures(plan: Plan) -> tuple[tuple[str, str], ...]:
-    return (("Prepared", plan.prepared), ("Checked", plan.checked), ("Approved", plan.approved))
+    signed = (("Prepared", plan.prepared), ("Checked", plan.checked), ("Approved", plan.approved))
+    return tuple((role, visible(name)) for role, name in signed)

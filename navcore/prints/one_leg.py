@@ -19,6 +19,7 @@ from navcore.prints.tracks import (
     parts_text,
     position_json,
 )
+from navcore.sailings.ties import tie_words
 from navcore.text.clock import format_duration
 from navcore.text.direction import format_angle, format_direction, format_minutes_of_arc
 from navcore.text.distance import format_distance, format_percent, format_speed
@@ -40,18 +41,21 @@ _EAST_WEST = ("E", "W")
 
 def one_leg_json(leg: LegComparison, chosen: ChosenTracks, speed_kn: float | None = None) -> str:
     """Return one leg as JSON in full precision; what has no value is null."""
-    circle = leg.great_circle
+    circle, moves = leg.great_circle, leg.great_circle.distance_nmi > 0.0
     vertex = None if circle.vertex is None else {**position_json(circle.vertex), "on_leg": circle.vertex_on_leg}
     track = chosen.composite
     document: dict[str, Json] = {
         "figure": leg.figure.name,
         "from": position_json(leg.start),
         "to": position_json(leg.end),
-        "rhumb_line": {"course_deg": leg.rhumb_line.course_deg, "distance_nmi": leg.rhumb_line.distance_nmi},
+        "rhumb_line": {
+            "course_deg": leg.rhumb_line.course_deg if moves else None,
+            "distance_nmi": leg.rhumb_line.distance_nmi,
+        },
         "great_circle": {
             "distance_nmi": circle.distance_nmi,
-            "initial_course_deg": circle.initial_course_deg,
-            "final_course_deg": circle.final_course_deg,
+            "initial_course_deg": circle.initial_course_deg if moves else None,
+            "final_course_deg": circle.final_course_deg if moves else None,
             "vertex": vertex,
         },
         "composite": None if track is None else composite_json(track),
@@ -92,8 +96,9 @@ def _by_lines(leg: LegComparison, speed_kn: float | None) -> Iterator[str]:
     if speed_kn is not None:
         times = (_time(distance_nmi, speed_kn) for distance_nmi in (rhumb.distance_nmi, circle.distance_nmi))
         yield _row(f"time at {format_speed(speed_kn)}", *times, f"saves {_time(leg.saving_nmi, speed_kn)}")
-    courses = f"{format_direction(circle.initial_course_deg)} → {format_direction(circle.final_course_deg)}"
-    yield _row("course", format_direction(rhumb.course_deg), courses, SPLIT_FIRST)
+    yield _row("course", *_courses(leg))
+    if said := tie_words(leg.start, leg.end, circle.initial_course_deg, circle.final_course_deg):
+        yield _row("", said)
     yield _row("vertex", "", _vertex(leg))
     yield _row("farthest apart", format_distance(leg.greatest_separation_nmi))
     by_sphere = (format_distance(line.distance_nmi) for line in (sphere.rhumb_line, sphere.great_circle))
@@ -107,7 +112,7 @@ def _by_tables(leg: LegComparison) -> Iterator[str]:
     yield _row("d.long", format_minutes_of_arc(tables.d_long_min, _EAST_WEST))
     yield _row("mean latitude", format_latitude(tables.mean_lat_deg))
     yield _row("departure", _departure(tables.departure_nmi))
-    yield _row("DMP", "" if tables.dmp_min is None else format_minutes_of_arc(tables.dmp_min, _NORTH_SOUTH))
+    yield _row("DMP", NO_VALUE if tables.dmp_min is None else format_minutes_of_arc(tables.dmp_min, _NORTH_SOUTH))
     yield _row("Mercator", *_course_and_distance(tables.mercator_course_deg, tables.mercator_distance_nmi))
     middle = _course_and_distance(tables.middle_latitude_course_deg, tables.middle_latitude_distance_nmi)
     yield _row("middle latitude", *middle)
@@ -132,7 +137,16 @@ def _by_choice(chosen: ChosenTracks, speed_kn: float | None) -> Iterator[str]:
 
 
 def _row(label: str, *cells: str) -> str:
-    return pad(label, _LABEL_CELLS) + "".join(pad(cell, _LINE_CELLS) + " " for cell in cells)
+    return pad(label, _LABEL_CELLS - 1) + " " + "".join(pad(cell, _LINE_CELLS) + " " for cell in cells)
+
+
+def _courses(leg: LegComparison) -> tuple[str, ...]:
+    rhumb, circle = leg.rhumb_line, leg.great_circle
+    if not circle.distance_nmi:
+        return NO_VALUE, NO_VALUE
+    printed = [format_direction(deg) for deg in (rhumb.course_deg, circle.initial_course_deg, circle.final_course_deg)]
+    said = "" if len(set(printed)) == 1 else SPLIT_FIRST
+    return printed[0], f"{printed[1]} → {printed[2]}", said
 
 
 def _time(distance_nmi: float, speed_kn: float) -> str:

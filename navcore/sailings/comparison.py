@@ -114,7 +114,8 @@ class LegComparison:
     @property
     def saving_nmi(self) -> float:
         """How much shorter the great circle is."""
-        return self.rhumb_line.distance_nmi - self.great_circle.distance_nmi
+        # Where both are one line, rounding could make it a hair less than nothing.
+        return max(0.0, self.rhumb_line.distance_nmi - self.great_circle.distance_nmi)
 
     @property
     def saving_percent(self) -> float:

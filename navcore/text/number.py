@@ -30,6 +30,8 @@ def rounded(value: float, parts_per_unit: int) -> int:
     if not math.isfinite(value):
         raise RangeError("value", value, "a finite number")
     steps = abs(value) * parts_per_unit
+    if not math.isfinite(steps):
+        return int(value) * parts_per_unit
     nearest = math.floor(steps + 0.5 + _HAIR_ULP * math.ulp(steps))
     return -nearest if value < 0.0 else nearest
 

@@ -361,10 +361,18 @@ def test_a_name_at_two_positions_is_warned_of_with_both_lines() -> None:
     assert read_plan(same.replace("2°", "1°").encode(), "p.toml").warnings == ()
 
 
-def test_a_note_in_no_column_is_warned_of() -> None:
-    (warning,) = read_plan(f"{TWO}notes = {{ chart = '4801' }}\n".encode(), "p.toml").warnings
-    assert (warning.line, warning.column) == (6, 11)
-    assert "not printed" in warning.what
+def test_a_note_in_no_column_that_the_plan_lists_is_warned_of() -> None:
+    listed = TWO.replace("legbook = 1", "legbook = 1\ncolumns = ['charts']", 1)
+    (warning,) = read_plan(f"{listed}notes = {{ chart = '4801' }}\n".encode(), "p.toml").warnings
+    assert "chart" in warning.what
+    assert "charts" in warning.allowed
+    assert read_plan(f"{TWO}notes = {{ chart = '4801' }}\n".encode(), "p.toml").warnings == ()
+
+
+@pytest.mark.parametrize(("choice", "word"), [("limit = '50N'", "limit"), ("parts = '12 parts'", "parts")])
+def test_a_choice_that_a_rhumb_line_makes_no_use_of_is_warned_of(choice: str, word: str) -> None:
+    (warning,) = read_plan(f"{TWO}{choice}\n".encode(), "p.toml").warnings
+    assert word in warning.advice
 
 
 def test_a_file_over_the_size_is_refused_unread() -> None:

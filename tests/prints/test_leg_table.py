@@ -144,3 +144,25 @@ def test_a_line_that_cannot_be_worked_refuses_the_table_by_the_legs_name() -> No
     for write in (make_leg_table, write_json):
         with pytest.raises(NoAnswerError, match="leg 1, A to B"):
             write(solve(plan))
+
+
+def test_a_stay_is_said_so_that_the_rows_explain_the_times() -> None:
+    waypoints = (
+        Waypoint("A", Position(0.0, 0.0)),
+        Waypoint("B", Position(1.0, 0.0), stay=timedelta(hours=54)),
+        Waypoint("C", Position(2.0, 0.0)),
+    )
+    plan = Plan(waypoints, (Leg(), Leg()), departure=datetime(2027, 1, 1, tzinfo=UTC), speed_kn=10.0)
+    assert "stay 2 d 06 h 00 min" in write_text(make_leg_table(solve(plan)))
+
+
+def test_times_that_do_not_add_up_are_said_to_be_rounded() -> None:
+    points = [Position(index / 300.0, 0.0) for index in range(9)]
+    waypoints = tuple(Waypoint("", point) for point in points)
+    plan = Plan(waypoints, tuple(Leg() for _ in points[1:]), speed_kn=30.0)
+    assert ROWS_ROUNDED in write_text(make_leg_table(solve(plan)))
+
+
+def test_a_leg_along_a_meridian_may_be_steered_whole() -> None:
+    waypoints = (Waypoint("A", Position(10.0, 5.0)), Waypoint("B", Position(60.0, 5.0)))
+    assert SPLIT_FIRST not in write_text(make_leg_table(solve(Plan(waypoints, (Leg(Line.GREAT_CIRCLE),)))))
