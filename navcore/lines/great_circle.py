@@ -3,32 +3,30 @@
 Everything takes degrees and metres, in arrays that broadcast. Latitudes outside -90 to 90 and numbers that are not
 finite raise RangeError. A leg that starts or ends at a pole runs along the other end's meridian.
 
-The geodesic problem itself is geographiclib's, called point by point in the small functions at the end; vertices and
-crossings come from the sphere of reduced latitudes, on which a geodesic is a great circle.
+The geodesic problem itself is solved in `geodesic_inverse` and `geodesic_direct`; vertices and crossings come from the
+sphere of reduced latitudes, on which a geodesic is a great circle.
 
 Source: C. F. F. Karney, Algorithms for geodesics, J. Geod. 87 (2013) 43-55 (K13).
 """
 
 from __future__ import annotations
 
-from functools import lru_cache
 from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
-from geographiclib.geodesic import Geodesic
 
-from navcore.angles import difference_of_longitude, wrap_180, wrap_360
+from navcore.angles import wrap_180
 from navcore.earth.latitudes import checked_latitude_deg, geographic_from_reduced_deg
+from navcore.lines import geodesic_inverse
+from navcore.lines.geodesic_direct import line
 from navcore.lines.leg import Crossing, Ends, checked_ends, checked_finite
 from navcore.trigonometry import sin_cos_deg
 
 if TYPE_CHECKING:
-    from collections.abc import Callable
-
     import numpy.typing as npt
-    from geographiclib.geodesicline import GeodesicLine
 
     from navcore.earth.figure import Figure
+    from navcore.lines.geodesic_direct import GeodesicPoint
     from navcore.lines.leg import BoolArray
     from navcore.trigonometry import FloatArray
 
@@ -127,8 +125,8 @@ def direct(
     """
     latitude, longitude = checked_latitude_deg(lat_deg), checked_finite("lon_deg", lon_deg)
     course, distance = checked_finite("course_deg", course_deg), checked_finite("distance_m", distance_m)
-    reached_lat, reached_lon, reached_course = _each_position(figure)(latitude, longitude, course, distance)
-    return GreatCirclePoint(reached_lat, wrap_180(reached_lon), wrap_360(reached_course))
+    reached = line(latitude, longitude, course, figure).at_distance(distance)
+    return GreatCirclePoint(reached.lat_deg, reached.lon_deg, reached.azimuth_deg)
 
 
 def course_at(
@@ -174,7 +172,7 @@ def vertex(
     on_north, on_south = north_off <= AT_END_ARC_DEG, south_off <= AT_END_ARC_DEG
     northern = np.where(on_north == on_south, leg.ends.lat1_deg + leg.ends.lat2_deg >= 0.0, on_north)
     reduced = np.degrees(np.arctan2(np.where(northern, 1.0, -1.0) * sphere.cos_node, np.abs(sphere.sin_node)))
-    _, longitude, _ = _each_arc_position(figure)(*_start(leg), np.where(northern, north_arc, south_arc))
+    longitude = _at_arc(leg, np.where(northern, north_arc, south_arc), figure).lon_deg
     meridional = sphere.sin_node == 0.0
     none = (leg.distance_m == 0.0) | (sphere.cos_node == 0.0)
     return Vertex(
@@ -210,9 +208,10 @@ def crossing_of_meridian(
     ahead = np.mod(sense * (meridian - leg.ends.lon1_deg), 360.0)
     crossed = (sphere.sin_node != 0.0) & (leg.distance_m > 0.0) & (ahead <= span)
     arc = _arc_to_meridian_deg(leg, sphere, np.where(crossed, ahead, 0.0), figure)
-    arc = np.where(ahead == span, leg.arc_deg, arc)
-    latitude, _, distance_m = _each_arc_position(figure)(*_start(leg), arc)
-    return Crossing(*(np.where(crossed, value, np.nan) for value in (latitude, wrap_180(meridian), distance_m)))
+    arc = np.where(ahead == span, leg.arc_deg, np.where(ahead == 0.0, 0.0, arc))
+    point = _at_arc(leg, arc, figure)
+    found = (point.lat_deg, wrap_180(meridian), point.distance_m)
+    return Crossing(*(np.where(crossed, value, np.nan) for value in found))
 
 
 def _arc_to_meridian_deg(leg: _Leg, sphere: _Sphere, ahead_deg: FloatArray, figure: Figure) -> FloatArray:
@@ -222,6 +221,7 @@ def _arc_to_meridian_deg(leg: _Leg, sphere: _Sphere, ahead_deg: FloatArray, figu
     than two figures.
     """
     sin_node = np.where(sphere.sin_node == 0.0, 1.0, np.abs(sphere.sin_node))
+    sense = np.where(sphere.sin_node < 0.0, -1.0, 1.0)
     sine, cosine = sin_cos_deg(sphere.arc_deg)
     spherical = np.degrees(np.arctan2(sin_node * sine, cosine)) + ahead_deg
     arc = np.zeros_like(spherical)
@@ -229,8 +229,8 @@ def _arc_to_meridian_deg(leg: _Leg, sphere: _Sphere, ahead_deg: FloatArray, figu
         sine, cosine = sin_cos_deg(spherical)
         # A leg spans half a turn at most: what looks like nearly a whole one is a hair before the start.
         arc = np.mod(np.degrees(np.arctan2(sine, sin_node * cosine)) - sphere.arc_deg + 90.0, 360.0) - 90.0
-        _, longitude, _ = _each_arc_position(figure)(*_start(leg), arc)
-        spherical = spherical + ahead_deg - np.abs(longitude - leg.ends.lon1_deg)
+        made = sense * (_at_arc(leg, arc, figure).lon_deg - leg.ends.lon1_deg)
+        spherical = spherical + ahead_deg - (np.mod(made + 90.0, 360.0) - 90.0)
     return arc
 
 
@@ -253,8 +253,9 @@ def crossings_of_parallel(
     arcs = np.sort(_arcs_at_parallel_deg(leg, sphere, parallel[..., np.newaxis], figure), axis=-1)
     arcs[..., 1] = np.where(arcs[..., 1] == arcs[..., 0], np.nan, arcs[..., 1])
     missed = np.isnan(arcs)
-    latitude, longitude, distance_m = _each_arc_position(figure)(*_start(leg), np.where(missed, 0.0, arcs))
-    return Crossing(*(np.where(missed, np.nan, value) for value in (latitude, wrap_180(longitude), distance_m)))
+    point = _at_arc(leg, np.where(missed, 0.0, arcs), figure)
+    found = (point.lat_deg, point.lon_deg, point.distance_m)
+    return Crossing(*(np.where(missed, np.nan, value) for value in found))
 
 
 def _arcs_at_parallel_deg(leg: _Leg, sphere: _Sphere, parallel_deg: FloatArray, figure: Figure) -> FloatArray:
@@ -290,64 +291,14 @@ def _on_sphere(leg: _Leg, figure: Figure) -> _Sphere:
     return _Sphere(sin_course * cosine, np.hypot(cos_course, sin_course * sine), arc_deg)
 
 
-def _start(leg: _Leg) -> tuple[FloatArray, FloatArray, FloatArray]:
-    return leg.ends.lat1_deg, leg.ends.lon1_deg, leg.initial_course_deg
-
-
 def _solved(ends: Ends, figure: Figure) -> _Leg:
-    """Solve legs, with a pole on the other end's meridian and the northern one of two equal lines."""
+    """Solve legs, with a pole on the other end's meridian."""
     lon1 = ends.own_meridian_deg
     ends = Ends(ends.lat1_deg, lon1, ends.lat2_deg, np.where(np.abs(ends.lat2_deg) == 90.0, lon1, ends.lon2_deg))
-    distance_m, arc_deg, azimuth1, azimuth2 = _each_inverse(figure)(*ends)
-    # From a latitude to its opposite a line and its mirror image in the equator, run backwards, are equally long.
-    opposite = ends.lat1_deg == -ends.lat2_deg
-    southern = opposite & (np.abs(azimuth1) > 90.0)
-    initial, final = np.where(southern, azimuth2, azimuth1), np.where(southern, azimuth1, azimuth2)
-    antipodal = opposite & (np.abs(difference_of_longitude(ends.lon1_deg, ends.lon2_deg)) == 180.0)
-    point = distance_m == 0.0
-    initial = np.where(antipodal | point, 0.0, initial)
-    final = np.where(point, 0.0, np.where(antipodal, 180.0, final))
-    return _Leg(ends, distance_m, arc_deg, wrap_360(initial), wrap_360(final))
+    distance_m, initial_deg, final_deg, arc_deg = geodesic_inverse.inverse(*ends, figure)
+    return _Leg(ends, distance_m, arc_deg, initial_deg, final_deg)
 
 
-@lru_cache(maxsize=64)
-def _geodesic(figure: Figure) -> Geodesic:
-    return Geodesic(figure.equatorial_radius_m, figure.flattening)
-
-
-@lru_cache(maxsize=1024)
-def _line(figure: Figure, lat_deg: float, lon_deg: float, course_deg: float) -> GeodesicLine:
-    return _geodesic(figure).Line(lat_deg, lon_deg, course_deg, Geodesic.STANDARD | Geodesic.DISTANCE_IN)
-
-
-def _each_inverse(figure: Figure) -> Callable[..., tuple[FloatArray, ...]]:
-    """Return distance, arc and the two azimuths, point by point."""
-    solve = _geodesic(figure).Inverse
-
-    def one(lat1_deg: float, lon1_deg: float, lat2_deg: float, lon2_deg: float) -> tuple[float, float, float, float]:
-        found = solve(lat1_deg, lon1_deg, lat2_deg, lon2_deg, Geodesic.DISTANCE | Geodesic.AZIMUTH)
-        return found["s12"], found["a12"], found["azi1"], found["azi2"]
-
-    return np.vectorize(one, otypes="dddd")
-
-
-def _each_position(figure: Figure) -> Callable[..., tuple[FloatArray, ...]]:
-    """Return latitude, longitude and course at a distance from a start on a course, point by point."""
-
-    def one(lat_deg: float, lon_deg: float, course_deg: float, distance_m: float) -> tuple[float, float, float]:
-        found = _line(figure, lat_deg, lon_deg, course_deg).Position(distance_m, Geodesic.STANDARD)
-        return found["lat2"], found["lon2"], found["azi2"]
-
-    return np.vectorize(one, otypes="ddd")
-
-
-def _each_arc_position(figure: Figure) -> Callable[..., tuple[FloatArray, ...]]:
-    """Return latitude, longitude counted on past 180, and distance, at an arc from a start on a course."""
-
-    def one(lat_deg: float, lon_deg: float, course_deg: float, arc_deg: float) -> tuple[float, float, float]:
-        found = _line(figure, lat_deg, lon_deg, course_deg).ArcPosition(
-            arc_deg, Geodesic.STANDARD | Geodesic.LONG_UNROLL
-        )
-        return found["lat2"], found["lon2"], found["s12"]
-
-    return np.vectorize(one, otypes="ddd")
+def _at_arc(leg: _Leg, arc_deg: FloatArray, figure: Figure) -> GeodesicPoint:
+    """Return the point at an arc from the start of legs, on the sphere of reduced latitudes."""
+    return line(leg.ends.lat1_deg, leg.ends.lon1_deg, leg.initial_course_deg, figure).at_arc(arc_deg)
