@@ -8,7 +8,7 @@ import sys
 import time
 from typing import TYPE_CHECKING
 
-from support import ROOT
+from tests.support import ROOT
 
 if TYPE_CHECKING:
     import pytest

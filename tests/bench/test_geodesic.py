@@ -1,4 +1,4 @@
-"""Great circles in bulk as a ratio to geographiclib's scalar inverse, in one run; 20 is to be held from 10,000 pairs."""
+"""Great circles in bulk as a ratio to one-by-one geographiclib in one run; 20 is to be held from 10,000 pairs."""
 
 from __future__ import annotations
 

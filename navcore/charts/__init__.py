@@ -1,0 +1,1 @@
+"""Charts: projections, graticules, plotting sheets and the shoreline. They take points and lines, not a plan."""
