@@ -113,9 +113,8 @@ def read_entries(text: str, plan: Plan, index: int) -> tuple[Plan, int, tuple[Un
             continue
         try:
             entry = read_entry(typed, plan, at)
-            if above_is_unread and at > 0 and entry.start is plan.waypoints[at - 1]:
-                reason = "the line above could not be read, and this one starts from it"
-                raise ParseError(typed, (0, len(typed)), reason, "mend the line above first")
+            if above_is_unread:
+                _refuse_from_above(typed, entry, plan, at)
         except ParseError as error:
             unread.append(Unread(number, at, typed, error))
             above_is_unread = True
@@ -124,6 +123,19 @@ def read_entries(text: str, plan: Plan, index: int) -> tuple[Plan, int, tuple[Un
         above_is_unread = False
         at += 1
     return plan, at - index, tuple(unread)
+
+
+def _refuse_from_above(text: str, entry: Entry, plan: Plan, index: int) -> None:
+    """Refuse a course and distance that would start from a line which could not be read."""
+    if index > 0 and entry.start is plan.waypoints[index - 1]:
+        reason = "the line above could not be read, and this one starts from it"
+        raise ParseError(text, (0, len(text)), reason, "mend the line above first")
+
+
+def _require_start_read(typed: str, *, starts_above: bool) -> None:
+    if starts_above:
+        reason = "the line above could not be read, and this one starts from it"
+        raise ParseError(typed, (0, len(typed)), reason, "mend the line above first")
 
 
 def _above(text: str, plan: Plan, index: int) -> Waypoint:

@@ -42,9 +42,9 @@ class Picture:
 
 
 PICTURES = (
-    Picture("workbook", "dusk", (132, 34), ("down", "down", "down", "a", *tuple("265/400"))),
-    Picture("workbook_night", "night", (132, 34), ("down", "down", "down")),
-    Picture("workbook_day", "day", (132, 34), ("down", "down", "down")),
+    Picture("workbook", "dusk", (138, 36), ("down", "down", "down", "a", *tuple("265/400"))),
+    Picture("workbook_night", "night", (138, 36), ("down", "down", "down")),
+    Picture("workbook_day", "day", (138, 36), ("down", "down", "down")),
 )
 
 

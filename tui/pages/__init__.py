@@ -1,0 +1,1 @@
+"""The pages of the workbook, over one plan and one cursor."""
