@@ -40,7 +40,7 @@ def hard_pairs(count: int) -> np.ndarray[tuple[int, int], np.dtype[np.float64]]:
 @pytest.mark.parametrize("figure", ALL, ids=lambda figure: figure.name)
 def test_distances_and_courses_are_geographiclibs(figure: Figure) -> None:
     pairs = hard_pairs(60)
-    ours = inverse(*pairs, figure)
+    ours = inverse(pairs[0], pairs[1], pairs[2], pairs[3], figure)
     theirs = Geodesic(figure.equatorial_radius_m, figure.flattening)
     found = [theirs.Inverse(*pair) for pair in pairs.T.tolist()]
     distance_m = np.array([one["s12"] for one in found])
@@ -99,9 +99,10 @@ def test_points_at_distances_and_arcs_are_geographiclibs(figure: Figure) -> None
 
 def test_a_single_pair_and_a_long_list_agree_to_the_bit() -> None:
     pairs = hard_pairs(1200)
-    together = inverse(*pairs, WGS_84)
+    together = inverse(pairs[0], pairs[1], pairs[2], pairs[3], WGS_84)
     for index in (0, 1234, 4321, 9999):
-        alone = inverse(*pairs[:, index].tolist(), WGS_84)
+        lat1_deg, lon1_deg, lat2_deg, lon2_deg = pairs[:, index].tolist()
+        alone = inverse(lat1_deg, lon1_deg, lat2_deg, lon2_deg, WGS_84)
         assert [part.ndim for part in map(np.asarray, alone)] == [0, 0, 0, 0]
         assert [float(part) for part in alone] == pytest.approx([float(part[index]) for part in together], rel=1e-15)
 
