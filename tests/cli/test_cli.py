@@ -254,3 +254,28 @@ def test_nothing_from_a_plan_reaches_the_terminal_as_a_control(tmp_path: Path) -
         assert done.returncode == 0
         for written in (done.stdout, refused.stderr):
             assert not {"\x1b", "\x07", "\u202e"} & set(written.decode())
+
+
+@pytest.mark.parametrize(
+    ("words", "unused"),
+    [
+        (["leg", "50N030W", "51N031W"], {"reportlab", "textual", "rich", "tomllib", "navcore.charts"}),
+        (["distances", "-"], {"reportlab", "textual", "rich", "tomllib", "navcore.charts", "navcore.prints.leg_table"}),
+        (["reckon", "50N030W", "045/60"], {"reportlab", "textual", "rich", "tomllib", "navcore.charts"}),
+        (["table", NORTH_PACIFIC], {"reportlab", "textual", "rich", "navcore.charts"}),
+        (["table", NORTH_PACIFIC, "--as", "json"], {"reportlab", "textual", "rich", "navcore.charts"}),
+    ],
+)
+def test_a_verb_imports_only_what_it_uses(words: list[str], unused: set[str]) -> None:
+    code = f"import sys; from tui.cli.main import run; run({words!r}); print('|'.join(sys.modules), file=sys.stderr)"
+    done = subprocess.run(
+        [sys.executable, "-c", code],
+        capture_output=True,
+        text=True,
+        check=False,
+        cwd=ROOT,
+        input="lat1,lon1,lat2,lon2\n",
+    )
+    loaded = set(done.stderr.splitlines()[-1].split("|"))
+    assert "numpy" in loaded
+    assert unused & loaded == set()
