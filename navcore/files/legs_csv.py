@@ -30,7 +30,9 @@ _DEGREES = ("lat1", "lon1", "lat2", "lon2")
 _PLACES = ("from", "to")
 _LIMITS_DEG = (90.0, 180.0, 90.0, 180.0)
 _TURN_DEG = 360.0
-_NUMBER = re.compile(r"[+-]?(\d+(\.\d*)?|\.\d+)([eE][+-]?\d{1,3})?", re.ASCII)
+_DECIMAL = r"[+-]?(?:\d+(?:\.\d*)?|\.\d+)(?:[eE][+-]?\d{1,3})?"
+_NUMBER = re.compile(_DECIMAL, re.ASCII)
+_FOUR_NUMBERS = re.compile(",".join([_DECIMAL] * 4), re.ASCII)
 
 Ends = tuple[float, float, float, float]
 
@@ -56,6 +58,8 @@ class LegColumns:
     def kept(self, row: Sequence[str]) -> list[str]:
         """Return a row as it is copied: filled to the headings, without the results of an earlier run."""
         filled = [*row, *[""] * (len(self.headings) - len(row))]
+        if not self.old_results:
+            return filled
         return [cell for index, cell in enumerate(filled) if index not in self.old_results]
 
     def ends(self, row: Sequence[str]) -> Ends:
@@ -70,6 +74,12 @@ class LegColumns:
         if len(self.indexes) == len(_PLACES):
             start, end = (self._place(row, index) for index in self.indexes)
             return (*start, *end)
+        cells = [row[index] for index in self.indexes]
+        # Four sound numbers are the rule, so they are looked at together; what is not is looked at cell by cell.
+        if _FOUR_NUMBERS.fullmatch(",".join(cells)):
+            lat1, lon1, lat2, lon2 = map(float, cells)
+            if -90.0 <= lat1 <= 90.0 and -90.0 <= lat2 <= 90.0 and -180.0 <= lon1 <= 180.0 and -180.0 <= lon2 <= 180.0:
+                return lat1, lon1, lat2, lon2
         lat1, lon1, lat2, lon2 = (
             self._degrees(row, index, limit) for index, limit in zip(self.indexes, _LIMITS_DEG, strict=True)
         )

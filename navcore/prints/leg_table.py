@@ -8,7 +8,7 @@ from decimal import Decimal
 from typing import TYPE_CHECKING
 
 from navcore.errors import NoAnswerError
-from navcore.plan.model import Trade
+from navcore.plan.model import Line, Trade
 from navcore.plan.quantities import QUANTITIES, Row, quantity_of, rows_of, typed_columns, typed_quantity
 from navcore.plan.revision import fingerprint
 from navcore.prints.caution import CAUTION
@@ -133,9 +133,18 @@ def method_line(plan: Plan) -> str:
     """Return how a plan's figures are got, in one sentence."""
     circle = "great circles" if plan.figure.flattening == 0.0 else "great circles (geodesics)"
     word = QUANTITIES["course_deg"].heading(plan.trade).lower()
+    composite = any(plan.line_of(leg) is Line.COMPOSITE for leg in plan.legs)
+    in_parts = any(leg.parts is not None and plan.line_of(leg) is not Line.RHUMB for leg in plan.legs)
     return (
         f"Rhumb lines and {circle} on the figure {plan.figure.name}; 1 NM = 1852 m; {word}s true, a great circle's "
-        f"initial → final. Positions: datum {visible(plan.datum)}. Times UTC."
+        "initial → final. "
+        + (
+            "Composites: great circles that touch the limiting parallel, and the parallel between. "
+            if composite
+            else ""
+        )
+        + ("Parts: rhumb lines between points of the line; totals are of what is steered. " if in_parts else "")
+        + f"Positions: datum {visible(plan.datum)}. Times UTC."
     )
 
 
