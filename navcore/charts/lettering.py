@@ -7,7 +7,7 @@ the neat line; of those left the one that covers the fewest drawn lines wins, ne
 from __future__ import annotations
 
 import math
-from dataclasses import dataclass, field
+from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
 import numpy as np
@@ -18,6 +18,8 @@ if TYPE_CHECKING:
     from navcore.trigonometry import FloatArray
 
 _GAP_MM = 0.4
+_EDGE_MM = 0.5
+_COST_OF_RANK = 0.4
 _RINGS_MM = (2.0, 4.0, 7.0, 11.0, 16.0, 23.0, 32.0)
 _LEADER_FROM_MM = 5.0
 _BEARINGS = ((1, 0), (1, 1), (1, -1), (-1, 0), (-1, 1), (-1, -1), (0, 1), (0, -1))
@@ -65,21 +67,26 @@ def boxes_meet(first: FloatArray, others: FloatArray) -> np.ndarray[tuple[int], 
     return np.asarray(~np.any(apart, axis=1))
 
 
-@dataclass(slots=True)
 class Board:
-    """A sheet's area while words are being set on it.
+    """A sheet's area while words are being set on it."""
 
-    Attributes:
-        width_mm: Inside the neat line.
-        height_mm: Inside the neat line.
-        drawn_mm: Points close together along what is drawn, shape (n, 2).
-        set_mm: Corners of what is set, each of shape (4, 2).
-    """
+    def __init__(self, width_mm: float, height_mm: float, drawn_mm: FloatArray) -> None:
+        """Begin with nothing set.
 
-    width_mm: float
-    height_mm: float
-    drawn_mm: FloatArray
-    set_mm: list[FloatArray] = field(default_factory=list)
+        Args:
+            width_mm: Inside the neat line.
+            height_mm: Inside the neat line.
+            drawn_mm: Points close together along what is drawn, shape (n, 2).
+        """
+        self.width_mm, self.height_mm = width_mm, height_mm
+        self.drawn_mm = drawn_mm[np.argsort(drawn_mm[:, 0], kind="stable")]
+        self._corners, self._ranges = np.empty((64, 4, 2)), np.empty((64, 4))
+        self._count = 0
+
+    @property
+    def set_mm(self) -> FloatArray:
+        """Corners of what is set, shape (n, 4, 2)."""
+        return self._corners[: self._count]
 
     def set_beside(self, words: str, size_mm: tuple[float, float], place_mm: tuple[float, float]) -> Lettering | None:
         """Set words beside a point, with a leader where they stand off; None where there is no room."""
@@ -91,31 +98,41 @@ class Board:
 
     def block(self, corners_mm: FloatArray) -> None:
         """Keep words out of a box."""
-        self.set_mm.append(corners_mm)
+        if self._count == len(self._corners):
+            self._corners = np.concatenate((self._corners, np.empty_like(self._corners)))
+            self._ranges = np.concatenate((self._ranges, np.empty_like(self._ranges)))
+        self._corners[self._count] = corners_mm
+        # Lowest x and y, and the highest turned round, so that one comparison tells whether two ranges meet.
+        self._ranges[self._count] = (*corners_mm.min(axis=0), *-corners_mm.max(axis=0))
+        self._count += 1
 
     def _set_best(self, choices: Iterable[Lettering]) -> Lettering | None:
         best, best_cost = None, math.inf
         for rank, choice in enumerate(choices):
-            corners = choice.corners_mm(_GAP_MM)
-            cost = self._covered(choice) + 0.4 * rank
-            if cost < best_cost and self._free(corners):
-                best, best_cost = choice, cost
-            if best_cost <= 0.4 * (rank + 1):
+            # A place that covers nothing costs what its rank does, so nothing later can be better than that.
+            if best_cost <= _COST_OF_RANK * rank:
                 break
+            if self._free(choice.corners_mm(_GAP_MM)):
+                cost = self._covered(choice) + _COST_OF_RANK * rank
+                if cost < best_cost:
+                    best, best_cost = choice, cost
         if best is not None:
-            self.set_mm.append(best.corners_mm(_GAP_MM))
+            self.block(best.corners_mm(_GAP_MM))
         return best
 
     def _free(self, corners: FloatArray) -> bool:
         low, high = corners.min(axis=0), corners.max(axis=0)
-        if low.min() < 0.5 or high[0] > self.width_mm - 0.5 or high[1] > self.height_mm - 0.5:
+        if low.min() < _EDGE_MM or high[0] > self.width_mm - _EDGE_MM or high[1] > self.height_mm - _EDGE_MM:
             return False
-        return not self.set_mm or not np.any(boxes_meet(corners, np.stack(self.set_mm)))
+        near = np.flatnonzero((self._ranges[: self._count] <= (*high, *-low)).all(axis=1))
+        return not (near.size and boxes_meet(corners, self._corners[near]).any())
 
     def _covered(self, choice: Lettering) -> int:
         """Return how many of the drawn points the words stand on."""
+        corners = choice.corners_mm(_GAP_MM)
+        first, last = np.searchsorted(self.drawn_mm[:, 0], [corners[:, 0].min(), corners[:, 0].max()])
         cosine, sine = math.cos(math.radians(choice.turn_deg)), math.sin(math.radians(choice.turn_deg))
-        off = self.drawn_mm - [choice.x_mm, choice.y_mm]
+        off = self.drawn_mm[first:last] - [choice.x_mm, choice.y_mm]
         across, up = off[:, 0] * cosine + off[:, 1] * sine, off[:, 1] * cosine - off[:, 0] * sine
         inside = (across > -_GAP_MM) & (across < choice.width_mm + _GAP_MM)
         return int(np.count_nonzero(inside & (up > -_GAP_MM) & (up < choice.height_mm + _GAP_MM)))

@@ -186,7 +186,8 @@ def _numbers(names: tuple[str, ...]) -> str:
 def revision_words(plan: Plan) -> str:
     """Return which plan it is."""
     voyage = f"{'Flight' if plan.trade is Trade.AVIATION else 'Voyage'} {plan.voyage}; " if plan.voyage else ""
-    return f"{voyage}revision {plan.revision}, plan {fingerprint(plan)}; datum of the positions {plan.datum}."
+    revision = f"{'revision' if voyage else 'Revision'} {plan.revision}, plan {fingerprint(plan)}"
+    return f"{voyage}{revision}; datum of the positions {plan.datum}."
 
 
 def _convergence_note(sheet: Sheet) -> str:

@@ -29,7 +29,7 @@ if TYPE_CHECKING:
 BESIDE_FROM = 116
 """Cells from which the margin has room beside the rows."""
 
-_SETTLE_S = 0.01
+_SETTLE_S = 0.001
 """How long the cursor must rest before the margin follows it."""
 
 _REST_S = 0.2
