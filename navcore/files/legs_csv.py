@@ -74,10 +74,10 @@ class LegColumns:
         if len(self.indexes) == len(_PLACES):
             start, end = (self._place(row, index) for index in self.indexes)
             return (*start, *end)
-        cells = [row[index] for index in self.indexes]
+        typed = [row[index] for index in self.indexes]
         # Four sound numbers are the rule, so they are looked at together; what is not is looked at cell by cell.
-        if _FOUR_NUMBERS.fullmatch(",".join(cells)):
-            lat1, lon1, lat2, lon2 = map(float, cells)
+        if _FOUR_NUMBERS.fullmatch(",".join(typed)):
+            lat1, lon1, lat2, lon2 = map(float, typed)
             if -90.0 <= lat1 <= 90.0 and -90.0 <= lat2 <= 90.0 and -180.0 <= lon1 <= 180.0 and -180.0 <= lon2 <= 180.0:
                 return lat1, lon1, lat2, lon2
         lat1, lon1, lat2, lon2 = (

@@ -8,6 +8,7 @@ were cut off rather than rounded comes after those that round.
 from __future__ import annotations
 
 import math
+import re
 from dataclasses import dataclass
 from enum import StrEnum
 from typing import TYPE_CHECKING
@@ -25,6 +26,8 @@ from navcore.sailings.composite import composite
 from navcore.sailings.parts import Parts, PartsRule
 from navcore.sailings.slips import slips_of
 from navcore.sailings.split import split_great_circle
+from navcore.text.direction import parse_direction
+from navcore.text.distance import parse_distance
 
 if TYPE_CHECKING:
     from collections.abc import Iterator, Sequence
@@ -48,6 +51,9 @@ class Kind(StrEnum):
     SLIP = "slip"
 
 
+_FIGURES = re.compile(r"(\d+)(?:\.(\d+))?", re.ASCII)
+
+
 @dataclass(frozen=True, slots=True)
 class Shown:
     """The figures another system shows, with half of their last printed digit.
@@ -63,6 +69,36 @@ class Shown:
     distance_half_nmi: float
     course_deg: float | None = None
     course_half_deg: float = 0.5
+
+
+def shown_as_typed(distance: str, course: str) -> Shown:
+    """Return figures as another system shows them, each with half of the last digit that was typed.
+
+    Args:
+        distance: Such as 3755, 3755.0 or 6954 km.
+        course: Such as 204 or 204.1; "" where none is shown.
+
+    Raises:
+        ParseError: One can't be read.
+    """
+    distance_nmi = parse_distance(distance)
+    course_deg = parse_direction(course) if course.strip() else None
+    return Shown(
+        distance_nmi,
+        _half_a_digit(distance, distance_nmi),
+        course_deg,
+        _half_a_digit(course, course_deg) if course_deg is not None else 0.5,
+    )
+
+
+def _half_a_digit(text: str, value: float) -> float:
+    """Return half of the last digit as typed, in the unit that the value was read into."""
+    figures = _FIGURES.search(text)
+    if figures is None:
+        return 0.5
+    half = 0.5 * 10.0 ** -len(figures[2] or "")
+    typed = float(figures[0])
+    return half * value / typed if typed and value else half
 
 
 @dataclass(frozen=True, slots=True)

@@ -2,7 +2,6 @@
 
 from __future__ import annotations
 
-import re
 from typing import TYPE_CHECKING
 
 from tui.cli.arguments import POSITION_FORMS, add_figure, add_json
@@ -12,8 +11,6 @@ from tui.cli.verb import Verb
 
 if TYPE_CHECKING:
     import argparse
-
-_FIGURES = re.compile(r"(\d+)(?:\.(\d+))?", re.ASCII)
 
 
 def _add_arguments(parser: argparse.ArgumentParser) -> None:
@@ -28,23 +25,17 @@ def _add_arguments(parser: argparse.ArgumentParser) -> None:
 
 
 def _run(arguments: argparse.Namespace) -> ExitCode:
-    from navcore.text.direction import parse_direction
-    from navcore.text.distance import parse_distance
+    from navcore.sailings.reconcile import shown_as_typed
     from navcore.text.position import parse_position
 
     ends = parse_position(arguments.start), parse_position(arguments.end)
-    distance_nmi = parse_distance(arguments.distance)
-    course_deg = None if arguments.course is None else parse_direction(arguments.course)
+    shown = shown_as_typed(arguments.distance, arguments.course or "")
     from navcore.earth.figure import figure_named
     from navcore.prints.reconciled import NOTHING_FITS, reconciled_json, reconciled_text
     from navcore.sailings.comparison import compare_lines
-    from navcore.sailings.reconcile import Shown, reconcile
+    from navcore.sailings.reconcile import reconcile
 
     figure = figure_named(arguments.figure)
-    distance_half_nmi = _half_a_digit(arguments.distance, distance_nmi)
-    shown = Shown(
-        distance_nmi, distance_half_nmi, course_deg, _half_a_digit(arguments.course or "0", course_deg or 0.0)
-    )
     explanations = reconcile(*ends, figure, shown)
     words = " ".join(word for word in (arguments.distance, arguments.course) if word)
     write_data(
@@ -56,16 +47,6 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
         say(NOTHING_FITS)
         return ExitCode.NO_ANSWER
     return ExitCode.DONE
-
-
-def _half_a_digit(text: str, value: float) -> float:
-    """Return half of the last digit as typed, in the unit that the value was read into."""
-    figures = _FIGURES.search(text)
-    if figures is None:
-        return 0.5
-    half = 0.5 * 10.0 ** -len(figures[2] or "")
-    typed = float(figures[0])
-    return half * value / typed if typed and value else half
 
 
 VERB = Verb("reconcile", "name what explains the figures another system shows for a leg", _add_arguments, _run)

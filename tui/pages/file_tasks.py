@@ -130,16 +130,18 @@ def _save_there(desk: Desk, path: Path, then: Callable[[], None] | None, *, over
         _saved(desk, then)
 
 
+def choose_file(desk: Desk, chosen: Callable[[Path | None], None]) -> None:
+    """Ask for the file of a plan: one of last time, or any other."""
+    folder = desk.session.path.parent if desk.session.path else Path.cwd()
+    desk.push_screen(FileChoice(folder, desk.session.state.recent()), chosen)
+
+
 def _open(desk: Desk) -> None:
     def chosen(path: Path | None) -> None:
         if path is not None:
             open_path(desk, path)
 
-    def choose() -> None:
-        folder = desk.session.path.parent if desk.session.path else Path.cwd()
-        desk.push_screen(FileChoice(folder, desk.session.state.recent()), chosen)
-
-    _if_kept(desk, choose, "open another")
+    _if_kept(desk, lambda: choose_file(desk, chosen), "open another")
 
 
 def _new(desk: Desk) -> None:

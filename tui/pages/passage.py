@@ -10,7 +10,7 @@ from textual.widgets import Static
 
 from navcore.prints.caution import CAUTION
 from tui.commands import Where, commands_of
-from tui.pages import passage_tasks, row_tasks
+from tui.pages import passage_tasks, row_tasks, sailing_tasks
 from tui.pages.desk import Page
 from tui.pages.typed_row import TypedRow
 from tui.present.rows import leg_of
@@ -55,7 +55,11 @@ class PassagePage(Page):
 
     BINDINGS: ClassVar[list[BindingType]] = bindings_of(Where.PASSAGE)
     where = Where.PASSAGE
-    tasks: ClassVar[Mapping[str, Callable[..., None]]] = {**passage_tasks.TASKS, **row_tasks.TASKS}
+    tasks: ClassVar[Mapping[str, Callable[..., None]]] = {
+        **passage_tasks.TASKS,
+        **row_tasks.TASKS,
+        **sailing_tasks.TASKS,
+    }
 
     def __init__(self) -> None:
         super().__init__()

@@ -2,26 +2,20 @@
 
 from __future__ import annotations
 
-from pathlib import Path
 from typing import TYPE_CHECKING
 
 from navcore.errors import NavError
-from navcore.files.store import write_whole
 from navcore.prints.column_choice import ONLY, screen_columns
 from navcore.prints.csv import write_csv
 from navcore.prints.leg_table import make_leg_table
-from navcore.text.plain import visible
-from tui.pages.file_tasks import path_typed
+from tui.pages.writing import write_asking
 from tui.present.papers import PAPERS, paper_words, sheet_cells
-from tui.widgets.dialogs import Answer, Question
 from tui.widgets.form import Field, Form, FormSheet
 
 if TYPE_CHECKING:
     from collections.abc import Callable, Mapping, Sequence
 
     from tui.pages.prints import PrintPage
-
-_UNNAMED = "passage"
 
 
 def _paper(page: PrintPage) -> None:
@@ -70,37 +64,7 @@ def _write(page: PrintPage, suffix: str, make: Callable[[PrintPage], bytes]) -> 
     except NavError as error:
         page.desk.say(str(error), alert=True)
         return
-    plan_path = page.session.path
-    usual = plan_path.with_suffix(suffix) if plan_path else Path.cwd() / f"{_UNNAMED}{suffix}"
-
-    def filled(texts: Sequence[str] | None) -> None:
-        if texts is not None:
-            _put(page, path_typed(field, texts[0], usual), data)
-
-    field = Field("file", visible(str(usual)), str, "Enter writes it there; its folder must exist")
-    page.app.push_screen(Form(FormSheet("Write the leg table", (field,), lambda _: None)), filled)
-
-
-def _put(page: PrintPage, path: Path, data: bytes) -> None:
-    if not path.exists():
-        _put_now(page, path, data)
-        return
-
-    def answered(key: str | None) -> None:
-        if key == "o":
-            _put_now(page, path, data)
-
-    answers = (Answer("o", "overwrite it"), Answer("k", "keep it"))
-    page.app.push_screen(Question(f"{visible(path.name)} is there already", [], answers), answered)
-
-
-def _put_now(page: PrintPage, path: Path, data: bytes) -> None:
-    try:
-        write_whole(path, data)
-    except OSError as error:
-        page.desk.say(f"{path}: {error.strerror or error}; nothing was written", alert=True)
-    else:
-        page.desk.say(f"leg table written to {path.absolute()}")
+    write_asking(page.desk, "leg table", suffix, data)
 
 
 TASKS: Mapping[str, Callable[..., None]] = {
