@@ -20,7 +20,7 @@ if TYPE_CHECKING:
     from navcore.sailings.checked import CheckedLine
     from navcore.sailings.working import Step, Working
 
-WIDTH = 80
+WIDTH = 76
 _SYMBOL = 16
 _FIGURE = 22
 _WORDS = WIDTH - _SYMBOL - _FIGURE - 1
