@@ -8,7 +8,6 @@ from navcore.errors import NavError
 from navcore.files.planfile import MAX_BYTES, read_plan
 from navcore.files.store import read_bytes_capped
 from navcore.plan.solve import solve
-from navcore.sailings.reconcile import reconcile, shown_as_typed
 from navcore.text.plain import visible
 from tui.pages.file_tasks import choose_file
 from tui.pages.writing import write_asking
@@ -85,6 +84,8 @@ def _show_compared(page: PassagePage, solutions: list[tuple[str, Solution]]) -> 
 
 
 def _reconcile(page: PassagePage) -> None:
+    from navcore.sailings.reconcile import shown_as_typed
+
     index = _leg(page)
     if index is None:
         return
@@ -106,6 +107,7 @@ def _reconcile(page: PassagePage) -> None:
 def _show_explained(page: PassagePage, index: int, texts: Sequence[str]) -> None:
     from navcore.prints.reconciled import NOTHING_FITS, reconciled_text
     from navcore.sailings.comparison import compare_lines
+    from navcore.sailings.reconcile import reconcile, shown_as_typed
 
     plan = page.session.plan
     ends = plan.waypoints[index].position, plan.waypoints[index + 1].position
