@@ -9,6 +9,7 @@ from typing import TYPE_CHECKING
 
 from navcore.constants import SECONDS_PER_HOUR
 from navcore.plan.leg_words import SPLIT_FIRST
+from navcore.prints.track_points import PointsAsked, track_points_json, track_points_text
 from navcore.prints.tracks import (
     NO_VALUE,
     composite_json,
@@ -20,6 +21,7 @@ from navcore.prints.tracks import (
     position_json,
 )
 from navcore.sailings.ties import tie_words
+from navcore.sailings.track import Piece, Track
 from navcore.text.clock import format_duration
 from navcore.text.direction import format_angle, format_direction, format_minutes_of_arc
 from navcore.text.distance import format_distance, format_percent, format_speed
@@ -32,6 +34,8 @@ if TYPE_CHECKING:
     from navcore.prints.tracks import Json
     from navcore.sailings.comparison import ChosenTracks, LegComparison
 
+NOTHING_ASKED = PointsAsked()
+
 _LABEL_CELLS = 20
 _LINE_CELLS = 20
 
@@ -39,7 +43,12 @@ _NORTH_SOUTH = ("N", "S")
 _EAST_WEST = ("E", "W")
 
 
-def one_leg_json(leg: LegComparison, chosen: ChosenTracks, speed_kn: float | None = None) -> str:
+def one_leg_json(
+    leg: LegComparison,
+    chosen: ChosenTracks,
+    speed_kn: float | None = None,
+    asked: PointsAsked = NOTHING_ASKED,
+) -> str:
     """Return one leg as JSON in full precision; what has no value is null."""
     circle, moves = leg.great_circle, leg.great_circle.distance_nmi > 0.0
     vertex = None if circle.vertex is None else {**position_json(circle.vertex), "on_leg": circle.vertex_on_leg}
@@ -72,10 +81,17 @@ def one_leg_json(leg: LegComparison, chosen: ChosenTracks, speed_kn: float | Non
         document["parts"] = parts_json(chosen.parts)
     if len(chosen.limits) > 1:
         document["limits"] = limits_json(chosen.limits, speed_kn)
+    if asked.is_anything:
+        document["tracks"] = track_points_json(_tracks(leg, chosen), asked)
     return json.dumps(document, ensure_ascii=False, indent=1, allow_nan=False) + "\n"
 
 
-def one_leg_text(leg: LegComparison, chosen: ChosenTracks, speed_kn: float | None = None) -> str:
+def one_leg_text(
+    leg: LegComparison,
+    chosen: ChosenTracks,
+    speed_kn: float | None = None,
+    asked: PointsAsked = NOTHING_ASKED,
+) -> str:
     """Return one leg as a navigator would set it down: the two lines side by side, the tables, what was asked for."""
     lines = [
         f"{format_position(leg.start)}  to  {format_position(leg.end)}",
@@ -85,8 +101,23 @@ def one_leg_text(leg: LegComparison, chosen: ChosenTracks, speed_kn: float | Non
         "",
         *_by_tables(leg),
         *_by_choice(chosen, speed_kn),
+        *(("", *track_points_text(_tracks(leg, chosen), asked)) if asked.is_anything else ()),
     ]
     return "\n".join(line.rstrip() for line in lines) + "\n"
+
+
+def _tracks(leg: LegComparison, chosen: ChosenTracks) -> dict[str, Track]:
+    """Return the lines of a leg by name: rhumb line, great circle, and the composite where one was asked for."""
+    tracks = {
+        "rhumb line": Track((Piece(leg.start, leg.end, is_great_circle=False),), leg.figure),
+        "great circle": Track((Piece(leg.start, leg.end, is_great_circle=True),), leg.figure),
+    }
+    composite = chosen.composite
+    if composite is not None and composite.tangent_points:
+        points = (leg.start, *composite.tangent_points, leg.end)
+        pieces = zip(points, points[1:], (True, False, True), strict=False)
+        tracks["composite"] = Track(tuple(Piece(*piece) for piece in pieces), leg.figure)
+    return tracks
 
 
 def _by_lines(leg: LegComparison, speed_kn: float | None) -> Iterator[str]:

@@ -7,7 +7,7 @@ import re
 import traceback
 from typing import TYPE_CHECKING
 
-from navcore.errors import NavError, NoAnswerError, ParseError, PlanFileError
+from navcore.errors import NavError, NoAnswerError, ParseError, PlanFileError, RangeError
 from navcore.prints.caution import CAUTION
 from tui.cli import compare, distances, leg, reckon, reconcile, sheet, table, worksheet
 from tui.cli.exit_codes import ExitCode
@@ -79,7 +79,7 @@ def _said(error: NavError | OSError) -> ExitCode:
     say(_words_of(error))
     if isinstance(error, NoAnswerError):
         return ExitCode.NO_ANSWER
-    if isinstance(error, ParseError):
+    if isinstance(error, ParseError | RangeError):
         return ExitCode.WRONG_USAGE
     return ExitCode.UNREADABLE
 
