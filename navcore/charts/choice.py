@@ -77,15 +77,11 @@ def coverage_of(points: Sequence[Position], legs: Sequence[TrackLeg], figure: Fi
     """
     if not points:
         raise NoAnswerError("there is no point to draw a sheet of; give the plan a waypoint, or the sheet two corners")
-    along = [
-        points_on(arc, np.linspace(0.0, 1.0, _SAMPLES), figure)
-        for leg in legs
-        for arc in leg.arcs
-        if arc.start != arc.end
-    ]
+    arcs = [arc for leg in legs for arc in leg.arcs]
+    along_lat_deg, along_lon_deg = points_on(arcs, np.linspace(0.0, 1.0, _SAMPLES), figure)
     own = np.array(points)
-    lat_deg = np.concatenate([*(part[0] for part in along), own[:, 0]])
-    lon_deg = np.concatenate([*(part[1] for part in along), own[:, 1]])
+    lat_deg = np.concatenate((along_lat_deg.ravel(), own[:, 0]))
+    lon_deg = np.concatenate((along_lon_deg.ravel(), own[:, 1]))
     # A pole is on every meridian: it takes that of the point before.
     at_pole = np.abs(lat_deg) == 90.0
     before = np.maximum.accumulate(np.where(at_pole, 0, np.arange(lat_deg.size)))

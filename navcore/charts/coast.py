@@ -80,6 +80,20 @@ class ShoreLines(NamedTuple):
     lon_deg: FloatArray
     starts: IntArray
 
+    def inside(self, south_deg: float, west_deg: float, north_deg: float, east_deg: float) -> ShoreLines:
+        """Return the lines that touch a window, which runs east from its western side; whole lines, not cut."""
+        starts = self.starts
+        lowest, highest = np.minimum.reduceat(self.lat_deg, starts), np.maximum.reduceat(self.lat_deg, starts)
+        left, right = np.minimum.reduceat(self.lon_deg, starts), np.maximum.reduceat(self.lon_deg, starts)
+        width_deg = east_deg - west_deg if east_deg >= west_deg else east_deg - west_deg + 360.0
+        to_left = np.mod(left - west_deg, 360.0)
+        meets = (to_left <= width_deg) | (to_left + (right - left) >= 360.0) | (width_deg >= 360.0)
+        kept = np.flatnonzero((lowest <= north_deg) & (highest >= south_deg) & meets)
+        ends = np.append(starts[1:], self.lat_deg.size)
+        counts = ends[kept] - starts[kept]
+        where = _runs(starts[kept], counts)
+        return ShoreLines(self.lat_deg[where], self.lon_deg[where], np.cumsum(counts) - counts)
+
 
 class _Pairs(NamedTuple):
     """What is to be held against which segment: two indexes of the same length, the first in order."""
@@ -193,20 +207,6 @@ class Coast:
         crossed = slanted & inside
         return piece[crossed], pairs.segment[crossed], along_piece[crossed]
 
-    def lines_inside(self, south_deg: float, west_deg: float, north_deg: float, east_deg: float) -> ShoreLines:
-        """Return the lines that touch a window, which runs east from its western side; whole lines, not cut."""
-        lines, starts = self.lines, self.lines.starts
-        lowest, highest = np.minimum.reduceat(lines.lat_deg, starts), np.maximum.reduceat(lines.lat_deg, starts)
-        left, right = np.minimum.reduceat(lines.lon_deg, starts), np.maximum.reduceat(lines.lon_deg, starts)
-        width_deg = east_deg - west_deg if east_deg >= west_deg else east_deg - west_deg + 360.0
-        to_left = np.mod(left - west_deg, 360.0)
-        meets = (to_left <= width_deg) | (to_left + (right - left) >= 360.0) | (width_deg >= 360.0)
-        kept = np.flatnonzero((lowest <= north_deg) & (highest >= south_deg) & meets)
-        ends = np.append(starts[1:], lines.lat_deg.size)
-        counts = ends[kept] - starts[kept]
-        where = _runs(starts[kept], counts)
-        return ShoreLines(lines.lat_deg[where], lines.lon_deg[where], np.cumsum(counts) - counts)
-
     def _pairs(self, ends: Ends, cap_m: float) -> Iterator[_Pairs]:
         """Yield each piece with each segment that may lie within the cap of it, in batches."""
         reach_deg = cap_m / _METRES_PER_DEGREE
@@ -299,15 +299,20 @@ def _middle_and_half(from_m: FloatArray, to_m: FloatArray) -> tuple[FloatArray, 
 
 
 @lru_cache(maxsize=1)
-def load_coast() -> Coast:
-    """Return the bundled shoreline; read once, when it is first asked for."""
+def load_shore_lines() -> ShoreLines:
+    """Return the lines of the bundled shoreline; read once, when they are first asked for."""
     source = files("navcore.charts") / "data" / "coast_gshhg_i.npz"
     with source.open("rb") as stream, np.load(stream) as stored:
         lon_lat = np.cumsum(stored["d"], axis=1, dtype=np.int64) / _UNITS_PER_DEGREE
         counts = stored["lens"].astype(np.int64)
     starts = np.cumsum(counts) - counts
-    lon_deg = _running_on_deg(lon_lat[0], starts)
-    return _indexed(ShoreLines(lon_lat[1], lon_deg, starts))
+    return ShoreLines(lon_lat[1], _running_on_deg(lon_lat[0], starts), starts)
+
+
+@lru_cache(maxsize=1)
+def load_coast() -> Coast:
+    """Return the bundled shoreline with its index, which is made once, when it is first asked for."""
+    return _indexed(load_shore_lines())
 
 
 def _running_on_deg(lon_deg: FloatArray, starts: IntArray) -> FloatArray:

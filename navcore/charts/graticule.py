@@ -7,6 +7,7 @@ Towards a pole the meridians thin out: one that is no multiple of 30° ends wher
 from __future__ import annotations
 
 from dataclasses import dataclass
+from functools import cached_property
 from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
@@ -72,27 +73,41 @@ class Intersection(NamedTuple):
     y_mm: float
 
 
-@dataclass(frozen=True, slots=True, eq=False)
+@dataclass(frozen=True, eq=False)
 class Graticule:
     """The lines of a sheet.
 
     Attributes:
+        plane: The sheet's.
         lat_interval_min: Between parallels, minutes of arc.
         lon_interval_min: Between meridians, minutes of arc.
         lat_graduation_min: Of the fine graduation in latitude.
         lon_graduation_min: Of the fine graduation in longitude.
         lines: Meridians from west to east, then parallels from south to north.
-        graduation: Where the finer meridians and parallels meet the neat line: (is_meridian, end).
-        intersections: Every one inside the neat line, from south to north and then from west to east.
+        parallels_deg: Those that were looked for, from south to north.
+        meridians_deg: Likewise from west to east, as far as they run on from the central meridian.
+        limits_deg: For each meridian the latitude, north or south, beyond which it is not drawn.
     """
 
+    plane: PaperPlane
     lat_interval_min: float
     lon_interval_min: float
     lat_graduation_min: float
     lon_graduation_min: float
     lines: tuple[GraticuleLine, ...]
-    graduation: tuple[tuple[bool, FrameEnd], ...]
-    intersections: tuple[Intersection, ...]
+    parallels_deg: FloatArray
+    meridians_deg: FloatArray
+    limits_deg: FloatArray
+
+    @cached_property
+    def graduation(self) -> tuple[tuple[bool, FrameEnd], ...]:
+        """Where the finer meridians and parallels meet the neat line: (is_meridian, end)."""
+        return _graduation(self.plane, self.lat_graduation_min, self.lon_graduation_min)
+
+    @cached_property
+    def intersections(self) -> tuple[Intersection, ...]:
+        """Every one inside the neat line, from south to north and then from west to east."""
+        return _intersections(self)
 
 
 class _Extent(NamedTuple):
@@ -113,21 +128,20 @@ def make_graticule(plane: PaperPlane) -> Graticule:
     lat_interval = _interval_min(wanted_mm / lat_mm, INTERVALS_MIN)
     of_the_circle = [value for value in INTERVALS_MIN if not extent.holds_pole or value in {60.0, 300.0, 600.0, 1800.0}]
     lon_interval = _interval_min(wanted_mm / lon_mm, of_the_circle)
-    lat_graduation = _graduation_min(lat_interval, lat_mm)
-    lon_graduation = _graduation_min(lon_interval, lon_mm)
     meridians = _multiples_deg(extent.west_deg, extent.east_deg, lon_interval, plane.projection.central_lon_deg)
     parallels = _multiples_deg(extent.south_deg, extent.north_deg, lat_interval, 0.0)
     limits = _limits_deg(plane, meridians, lat_interval, lon_interval)
-    lines = [_meridian(plane, lon, extent, limit) for lon, limit in zip(meridians, limits, strict=True)]
-    lines += [_parallel(plane, lat, extent) for lat in parallels if abs(lat) < 90.0]
+    lines = (*_meridians(plane, meridians, extent, limits), *_parallels(plane, parallels, extent))
     return Graticule(
+        plane,
         lat_interval,
         lon_interval,
-        lat_graduation,
-        lon_graduation,
+        _graduation_min(lat_interval, lat_mm),
+        _graduation_min(lon_interval, lon_mm),
         tuple(line for line in lines if line.pieces_mm),
-        _graduation(plane, lat_graduation, lon_graduation),
-        _intersections(plane, parallels, meridians, limits),
+        parallels,
+        meridians,
+        limits,
     )
 
 
@@ -177,22 +191,22 @@ def _graduation_min(interval_min: float, mm_per_minute: float) -> float:
     return next((step for step in fine if step * mm_per_minute >= _CLOSEST_GRADUATION_MM), interval_min)
 
 
-def _multiples_deg(from_deg: float, to_deg: float, interval_min: float, origin_deg: float) -> list[float]:
+def _multiples_deg(from_deg: float, to_deg: float, interval_min: float, origin_deg: float) -> FloatArray:
     """Return the multiples of an interval in a range counted from an origin; longitudes of a whole turn once each."""
     first = int(np.ceil((from_deg + origin_deg) * 60.0 / interval_min - 1e-9))
     last = int(np.floor((to_deg + origin_deg) * 60.0 / interval_min + 1e-9))
     last = min(last, first + round(21600.0 / interval_min) - 1)
-    return [number * interval_min / 60.0 for number in range(first, last + 1)]
+    return np.arange(first, last + 1, dtype=np.float64) * interval_min / 60.0
 
 
 def _limits_deg(
-    plane: PaperPlane, meridians_deg: list[float], lat_interval_min: float, lon_interval_min: float
-) -> list[float]:
+    plane: PaperPlane, meridians_deg: FloatArray, lat_interval_min: float, lon_interval_min: float
+) -> FloatArray:
     """Return for each meridian the latitude, north or south, beyond which it is not drawn."""
     step_deg = lat_interval_min / 60.0
     lat_deg = np.arange(0.0, 90.0, step_deg)
-    _, middle_lon_deg = plane.to_earth(plane.width_mm / 2.0, plane.height_mm / 2.0)
-    pole_sign = 1.0 if float(plane.to_earth(plane.width_mm / 2.0, plane.height_mm / 2.0)[0]) >= 0.0 else -1.0
+    middle_lat_deg, middle_lon_deg = plane.to_earth(plane.width_mm / 2.0, plane.height_mm / 2.0)
+    pole_sign = 1.0 if float(middle_lat_deg) >= 0.0 else -1.0
     factor = plane.projection.scale_factor(pole_sign * lat_deg, middle_lon_deg) * 1000.0 / plane.scale
     mm_per_degree = degree_of_longitude_m(lat_deg, plane.projection.figure) * factor
 
@@ -201,31 +215,38 @@ def _limits_deg(
         roomy = np.flatnonzero(~(mm_per_degree * apart_deg < _CLOSEST_MERIDIANS_MM))
         return float(lat_deg[roomy[-1]]) if roomy.size else 0.0
 
-    common, of_30, of_90 = limit(lon_interval_min / 60.0), limit(30.0), 90.0
-    return [of_90 if lon % 90.0 == 0.0 else of_30 if lon % 30.0 == 0.0 else common for lon in meridians_deg]
+    to_pole = np.where(meridians_deg % 30.0 == 0.0, limit(30.0), limit(lon_interval_min / 60.0))
+    return np.where(meridians_deg % 90.0 == 0.0, 90.0, to_pole)
 
 
-def _meridian(plane: PaperPlane, lon_deg: float, extent: _Extent, limit_deg: float) -> GraticuleLine:
-    lowest, highest = max(extent.south_deg, -limit_deg), min(extent.north_deg, limit_deg)
-    lat_deg = np.linspace(lowest, max(lowest, highest), 181)
-    return _line(plane, lon_deg, lat_deg, np.full(lat_deg.size, lon_deg), is_meridian=True)
+def _meridians(
+    plane: PaperPlane, meridians_deg: FloatArray, extent: _Extent, limits_deg: FloatArray
+) -> list[GraticuleLine]:
+    lowest = np.maximum(extent.south_deg, -limits_deg)
+    highest = np.maximum(np.minimum(extent.north_deg, limits_deg), lowest)
+    lat_deg = np.linspace(lowest, highest, 181, axis=-1)
+    lines_mm = plane.to_mm(lat_deg, np.broadcast_to(meridians_deg[:, np.newaxis], lat_deg.shape))
+    return [
+        _line(plane, float(wrap_180(value_deg)), points, is_meridian=True)
+        for value_deg, points in zip(meridians_deg, lines_mm, strict=True)
+    ]
 
 
-def _parallel(plane: PaperPlane, lat_deg: float, extent: _Extent) -> GraticuleLine:
-    relative = np.linspace(extent.west_deg, extent.east_deg, 361)
-    lon_deg = plane.projection.central_lon_deg + relative
-    return _line(plane, lat_deg, np.full(lon_deg.size, lat_deg), lon_deg, is_meridian=False)
+def _parallels(plane: PaperPlane, parallels_deg: FloatArray, extent: _Extent) -> list[GraticuleLine]:
+    drawn_deg = parallels_deg[np.abs(parallels_deg) < 90.0]
+    lon_deg = plane.projection.central_lon_deg + np.linspace(extent.west_deg, extent.east_deg, 361)
+    lines_mm = plane.to_mm(*np.broadcast_arrays(drawn_deg[:, np.newaxis], lon_deg))
+    return [
+        _line(plane, float(value_deg), points, is_meridian=False)
+        for value_deg, points in zip(drawn_deg, lines_mm, strict=True)
+    ]
 
 
-def _line(
-    plane: PaperPlane, value_deg: float, lat_deg: FloatArray, lon_deg: FloatArray, *, is_meridian: bool
-) -> GraticuleLine:
-    points = plane.to_mm(lat_deg, lon_deg)
-    shown = points[np.isfinite(points[:, 0])]
+def _line(plane: PaperPlane, value_deg: float, points_mm: FloatArray, *, is_meridian: bool) -> GraticuleLine:
+    shown = points_mm[np.isfinite(points_mm[:, 0])]
     pieces = cut_at(shown, plane.window_mm) if len(shown) > 1 else []
     ends = [end for piece in pieces for point in (piece[0], piece[-1]) if (end := _frame_end(plane, value_deg, point))]
-    value = wrap_180(value_deg) if is_meridian else value_deg
-    return GraticuleLine(is_meridian, value, tuple(pieces), tuple(end._replace(value_deg=value) for end in ends))
+    return GraticuleLine(is_meridian, value_deg, tuple(pieces), tuple(ends))
 
 
 def _frame_end(plane: PaperPlane, value_deg: float, point_mm: FloatArray) -> FrameEnd | None:
@@ -270,11 +291,10 @@ def _met(value_deg: FloatArray, step_min: float, edge_mm: FloatArray) -> list[tu
     return found
 
 
-def _intersections(
-    plane: PaperPlane, parallels_deg: list[float], meridians_deg: list[float], limits_deg: list[float]
-) -> tuple[Intersection, ...]:
-    lat_deg, lon_deg = np.meshgrid(parallels_deg, meridians_deg, indexing="ij")
-    drawn = (np.abs(lat_deg) <= np.array(limits_deg)) & (np.abs(lat_deg) < 90.0)
+def _intersections(graticule: Graticule) -> tuple[Intersection, ...]:
+    plane = graticule.plane
+    lat_deg, lon_deg = np.meshgrid(graticule.parallels_deg, graticule.meridians_deg, indexing="ij")
+    drawn = (np.abs(lat_deg) <= graticule.limits_deg) & (np.abs(lat_deg) < 90.0)
     lat_deg, lon_deg = lat_deg[drawn], lon_deg[drawn]
     place = plane.to_mm(lat_deg, lon_deg)
     inside = plane.holds(place)

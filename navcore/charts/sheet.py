@@ -7,10 +7,11 @@ from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 
-from navcore.charts.coast import load_coast
+from navcore.charts.coast import load_shore_lines
 from navcore.charts.graticule import make_graticule
 from navcore.charts.lettering import Board, points_along
 from navcore.charts.ruling import make_ruling
+from navcore.charts.shore import lay_off_shore, thinned
 from navcore.charts.track import cut_at
 
 if TYPE_CHECKING:
@@ -33,6 +34,7 @@ ISLET_MM = 0.3
 
 _MARK_MM = np.array([[-1.5, -1.5], [1.5, -1.5], [1.5, 1.5], [-1.5, 1.5]])
 _COAST_DETAIL_MM = 0.15
+_CUT_MM = 20.0
 _LARGEST_ROSE_MM = 32.0
 _SMALLEST_ROSE_MM = 9.0
 
@@ -279,34 +281,16 @@ def _coast(plane: PaperPlane) -> tuple[FloatArray, ...]:
     lat_deg, _ = plane.to_earth(x_mm, y_mm)
     poles = [pole for pole in (-90.0, 90.0) if plane.holds(plane.to_mm(pole, plane.projection.central_lon_deg))]
     inside_deg = np.concatenate((lat_deg[np.isfinite(lat_deg)], poles, [_middle_lat_deg(plane)]))
-    lines = load_coast().lines_inside(float(inside_deg.min()) - 0.5, -180.0, float(inside_deg.max()) + 0.5, 180.0)
-    if lines.starts.size == 0:
-        return ()
-    place = plane.to_mm(lines.lat_deg, lines.lon_deg)
+    lines = load_shore_lines().inside(float(inside_deg.min()) - 0.5, -180.0, float(inside_deg.max()) + 0.5, 180.0)
     # All lines in one array with gaps between them, so that they are cut at the neat line in one go.
-    gaps = np.union1d(lines.starts[1:], np.flatnonzero(_leaps(place, plane)) + 1)
-    whole = _coarser(np.insert(place, gaps, np.nan, axis=0))
-    return tuple(_visible(piece) for piece in cut_at(whole, plane.window_mm))
+    place_mm = lay_off_shore(lines, plane.to_mm, plane.projection.central_lon_deg, _CUT_MM)
+    if not len(place_mm):
+        return ()
+    return tuple(_visible(piece) for piece in cut_at(thinned(place_mm, _COAST_DETAIL_MM), plane.window_mm))
 
 
 def _middle_lat_deg(plane: PaperPlane) -> float:
     return float(plane.to_earth(plane.width_mm / 2.0, plane.height_mm / 2.0)[0])
-
-
-def _leaps(place_mm: FloatArray, plane: PaperPlane) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
-    """Return after which points the shore leaps across the sheet and more: where the map is cut."""
-    steps = np.diff(place_mm, axis=0)
-    return np.asarray(np.hypot(steps[:, 0], steps[:, 1]) > max(plane.width_mm, 100.0))
-
-
-def _coarser(place_mm: FloatArray) -> FloatArray:
-    """Return lines without points that fall in the same small square as the one before; their ends stay."""
-    square = np.floor(place_mm / _COAST_DETAIL_MM)
-    moved = np.any(square[1:] != square[:-1], axis=1)
-    kept = np.concatenate(([True], moved))
-    # A gap differs from everything, itself included, so the point before it has still to be kept.
-    kept[:-1] |= np.isnan(place_mm[1:, 0])
-    return place_mm[kept]
 
 
 def _visible(piece_mm: FloatArray) -> FloatArray:

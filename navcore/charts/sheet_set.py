@@ -15,7 +15,7 @@ import numpy as np
 from navcore.charts.choice import bounds_m, choose_projection, coverage_of, scale_to_fit
 from navcore.charts.plane import PaperPlane
 from navcore.charts.sheet import Contents, Outline, make_sheet
-from navcore.charts.track import cut_at, lay_off
+from navcore.charts.track import TOLERANCE_MM, LaidArcs, cut_at
 from navcore.errors import NoAnswerError, RangeError
 
 if TYPE_CHECKING:
@@ -176,15 +176,10 @@ def _contents(
     )
     slack_x, slack_y = paper.frame_width_mm, paper.frame_height_mm
     window = (-slack_x, -slack_y, whole.width_mm + slack_x, whole.height_mm + slack_y)
-    polylines = tuple(
-        tuple(
-            line
-            for arc in leg.arcs
-            if arc.start != arc.end
-            for line in lay_off(arc, request.figure, whole.to_mm, window)
-        )
-        for leg in request.legs
-    )
+    laid = LaidArcs([arc for leg in request.legs for arc in leg.arcs], request.figure, whole.to_mm)
+    laid.look_at(window, TOLERANCE_MM)
+    of_arcs = iter(laid.polylines(TOLERANCE_MM))
+    polylines = tuple(tuple(line for _ in leg.arcs for line in next(of_arcs)) for leg in request.legs)
     return Contents(request.points, request.legs, polylines, request.text_width_mm, request.coast)
 
 

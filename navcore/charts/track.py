@@ -3,28 +3,34 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 
 from navcore.lines import great_circle, rhumb_line
 
 if TYPE_CHECKING:
-    from collections.abc import Callable
+    from collections.abc import Callable, Sequence
+
+    import numpy.typing as npt
 
     from navcore.earth.figure import Figure
     from navcore.position import Position
     from navcore.trigonometry import FloatArray
 
+    BoolArray = npt.NDArray[np.bool_]
+    IntArray = npt.NDArray[np.int64]
     Window = tuple[float, float, float, float]
-    ToPaper = Callable[[FloatArray, FloatArray], FloatArray]
+    ToPlane = Callable[[FloatArray, FloatArray], FloatArray]
 
 TOLERANCE_MM = 0.02
-"""The farthest that a polyline may be from its curve at the points looked at; tests/charts/test_track.py holds 0.05."""
+"""The farthest that a polyline on paper may be from its curve at the points looked at; tests/charts/test_track.py holds
+0.05."""
 
-_FIRST_NODES = 17
+_FIRST_PARTS = 16
 _SHORTEST_PART = 1e-9
-_LONG_CHORD_MM = 1.0
+_LONG_CHORD = 50.0
+_PROBES = np.array([0.25, 0.5, 0.75])
 
 
 @dataclass(frozen=True, slots=True)
@@ -62,112 +68,210 @@ class TrackLeg:
         return any(arc.great_circle for arc in self.arcs)
 
 
-def points_on(arc: Arc, fraction: FloatArray, figure: Figure) -> tuple[FloatArray, FloatArray]:
-    """Return the latitudes and longitudes at fractions, 0 to 1, of an arc's length; the ends are the very ends."""
-    ends = (*arc.start, *arc.end)
-    lines = great_circle if arc.great_circle else rhumb_line
-    length_m = lines.inverse(*ends, figure).distance_m
-    lat_deg, lon_deg = lines.points_along(*ends, fraction * length_m, figure)
+class _Ends(NamedTuple):
+    """The ends of arcs, one row each, shape (n, 1)."""
+
+    lat1_deg: FloatArray
+    lon1_deg: FloatArray
+    lat2_deg: FloatArray
+    lon2_deg: FloatArray
+
+
+def points_on(arcs: Sequence[Arc], fraction: FloatArray, figure: Figure) -> tuple[FloatArray, FloatArray]:
+    """Return latitudes and longitudes, shape (arcs, fractions), at fractions, 0 to 1, of each arc's length.
+
+    The ends are the very ends.
+    """
+    return _points(*_of_arcs(arcs), np.broadcast_to(fraction, (len(arcs), fraction.shape[-1])), figure)
+
+
+def _of_arcs(arcs: Sequence[Arc]) -> tuple[_Ends, BoolArray]:
+    ends = np.array([(*arc.start, *arc.end) for arc in arcs], dtype=np.float64).reshape(-1, 4)
+    return _Ends(*(ends[:, [column]] for column in range(4))), np.array([arc.great_circle for arc in arcs], dtype=bool)
+
+
+def _points(
+    ends: _Ends, is_great_circle: BoolArray, fraction: FloatArray, figure: Figure
+) -> tuple[FloatArray, FloatArray]:
+    lat_deg, lon_deg = np.empty(fraction.shape), np.empty(fraction.shape)
+    for lines, kind in ((great_circle, True), (rhumb_line, False)):
+        rows = np.flatnonzero(is_great_circle == kind)
+        own = _Ends(*(column[rows] for column in ends))
+        length_m = lines.inverse(*own, figure).distance_m
+        lat_deg[rows], lon_deg[rows] = lines.points_along(*own, fraction[rows] * length_m, figure)
     at_start, at_end = fraction == 0.0, fraction == 1.0
-    lat_deg = np.where(at_start, arc.start.lat_deg, np.where(at_end, arc.end.lat_deg, lat_deg))
-    return lat_deg, np.where(at_start, arc.start.lon_deg, np.where(at_end, arc.end.lon_deg, lon_deg))
+    lat_deg = np.where(at_start, ends.lat1_deg, np.where(at_end, ends.lat2_deg, lat_deg))
+    return lat_deg, np.where(at_start, ends.lon1_deg, np.where(at_end, ends.lon2_deg, lon_deg))
 
 
-def lay_off(arc: Arc, figure: Figure, to_mm: ToPaper, window_mm: Window) -> list[FloatArray]:
-    """Return an arc on paper as polylines, broken where the map is cut or ends.
+class _Nodes(NamedTuple):
+    """Nodes of polylines, one arc after the other; each but an arc's last has an interval that follows it.
 
-    Args:
-        arc: The line.
-        figure: The figure it runs on.
-        to_mm: From latitudes and longitudes to paper, shape (n, 2); NaN where a point can't be shown.
-        window_mm: Left, bottom, right, top of what will be looked at; outside it the line may be coarse.
+    Attributes:
+        arc: Whose node it is.
+        fraction: Of the arc's length.
+        place: On the plane, shape (n, 2); NaN where it can't be shown.
+        width: Of the interval, as a fraction; 0 where none follows.
+        seen: Points of the interval at _PROBES of it, shape (n, 3, 2).
+        bend: How far the curve is from the interval's chord: 0 where there is nothing to see, infinite at an edge.
+        low: Left and bottom of what the interval may touch, shape (n, 2).
+        high: Right and top of it.
     """
 
-    def at(fraction: FloatArray) -> FloatArray:
-        return to_mm(*points_on(arc, fraction, figure))
+    arc: IntArray
+    fraction: FloatArray
+    place: FloatArray
+    width: FloatArray
+    seen: FloatArray
+    bend: FloatArray
+    low: FloatArray
+    high: FloatArray
 
-    node = np.linspace(0.0, 1.0, _FIRST_NODES)
-    place = at(node)
-    torn = np.zeros(node.size, dtype=bool)
-    active = np.arange(node.size - 1)
-    while active.size:
-        width = node[active + 1] - node[active]
-        probes = node[active, np.newaxis] + width[:, np.newaxis] * np.array([0.25, 0.5, 0.75])
-        seen = at(probes.ravel()).reshape(-1, 3, 2)
-        bent = _bent(place[active], place[active + 1], seen) & _in_sight(
-            place[active], place[active + 1], seen, window_mm
+
+class LaidArcs:
+    """Arcs laid off on a plane: coarse at first, and finer wherever they have been looked at closely."""
+
+    def __init__(self, arcs: Sequence[Arc], figure: Figure, to_plane: ToPlane) -> None:
+        """Lay arcs off.
+
+        Args:
+            arcs: The lines; one of no length is a point, of which nothing is drawn.
+            figure: The figure they run on.
+            to_plane: From latitudes and longitudes to the plane, shape (..., 2); NaN where a point can't be shown.
+        """
+        self._ends, self._is_great_circle = _of_arcs(arcs)
+        self._figure = figure
+        self._to_plane = to_plane
+        self._count = count = len(arcs)
+        fraction = np.broadcast_to(np.linspace(0.0, 1.0, 4 * _FIRST_PARTS + 1), (count, 4 * _FIRST_PARTS + 1))
+        place = self._at(np.arange(count), fraction)
+        nodes = place[:, ::4].reshape(-1, 2)
+        seen = np.full((count, _FIRST_PARTS + 1, 3, 2), np.nan)
+        seen[:, :-1] = place[:, :-1].reshape(count, _FIRST_PARTS, 4, 2)[:, :, 1:]
+        width = np.where(fraction[:, ::4] < 1.0, 1.0 / _FIRST_PARTS, 0.0)
+        self._nodes = _measured(
+            np.repeat(np.arange(count), _FIRST_PARTS + 1),
+            fraction[:, ::4].ravel(),
+            nodes,
+            width.ravel(),
+            seen.reshape(-1, 3, 2),
+            np.concatenate((nodes[1:], nodes[-1:])),
         )
-        finest = width < _SHORTEST_PART
-        torn[active[bent & finest]] = True
-        split = bent & ~finest
-        where = np.repeat(active[split] + 1, 3)
-        node = np.insert(node, where, probes[split].ravel())
-        torn = np.insert(torn, where, values=False)
-        place = np.insert(place, where, seen[split].reshape(-1, 2), axis=0)
-        # Each interval that was split is now four, all still to be looked at.
-        first = active[split] + 3 * np.arange(np.count_nonzero(split))
-        active = (first[:, np.newaxis] + np.arange(4)).ravel()
-    return _unbroken(place, torn)
+
+    def _at(self, arc: IntArray, fraction: FloatArray) -> FloatArray:
+        ends = _Ends(*(column[arc] for column in self._ends))
+        return self._to_plane(*_points(ends, self._is_great_circle[arc], fraction, self._figure))
+
+    def look_at(self, window: Window, tolerance: float) -> None:
+        """Lay off what may come into a window, within a tolerance of its curve; both in the unit of the plane."""
+        while True:
+            nodes = self._nodes
+            left, bottom, right, top = window
+            meets = np.all((nodes.low <= (right, top)) & (nodes.high >= (left, bottom)), axis=1)
+            split = np.flatnonzero((nodes.bend > tolerance) & meets & (nodes.width > _SHORTEST_PART))
+            if not split.size:
+                return
+            self._split(split)
+
+    def _split(self, split: IntArray) -> None:
+        """Make three nodes of what is seen inside each interval; each of the four new ones is looked at in its turn."""
+        nodes = self._nodes
+        quarter = 0.25 * nodes.width[split]
+        inside = nodes.fraction[split, np.newaxis] + quarter[:, np.newaxis] * np.arange(4)
+        probes = inside[:, :, np.newaxis] + quarter[:, np.newaxis, np.newaxis] * _PROBES
+        seen = self._at(nodes.arc[split], probes.reshape(-1, 12)).reshape(-1, 3, 2)
+        places = np.concatenate((nodes.place[split, np.newaxis], nodes.seen[split]), axis=1)
+        following = np.concatenate((places[:, 1:], nodes.place[split + 1, np.newaxis]), axis=1)
+        arc, width = np.repeat(nodes.arc[split], 4), np.repeat(quarter, 4)
+        new = _measured(arc, inside.ravel(), places.reshape(-1, 2), width, seen, following.reshape(-1, 2))
+        kept = np.ones(nodes.arc.size, dtype=bool)
+        kept[split] = False
+        order = np.argsort(np.concatenate((np.flatnonzero(kept), np.repeat(split, 4))), kind="stable")
+        joined = (np.concatenate((old[kept], added))[order] for old, added in zip(nodes, new, strict=True))
+        self._nodes = _Nodes(*joined)
+
+    def joined(self, tolerance: float) -> tuple[FloatArray, IntArray]:
+        """Return every polyline one after the other, shape (n, 2), with a NaN between, and whose each point is.
+
+        Args:
+            tolerance: As it was looked at; where the map is cut, and nowhere else, a chord is farther off than that.
+        """
+        nodes = self._nodes
+        torn = (nodes.width == 0.0) | ((nodes.width <= _SHORTEST_PART) & (nodes.bend > tolerance))
+        after = np.flatnonzero(torn) + 1
+        return np.insert(nodes.place, after, np.nan, axis=0), np.insert(nodes.arc, after, nodes.arc[after - 1])
+
+    def polylines(self, tolerance: float) -> list[list[FloatArray]]:
+        """Return for each arc its polylines, each of shape (n, 2); of more than one where the map is cut or ends."""
+        place, arc = self.joined(tolerance)
+        found: list[list[FloatArray]] = [[] for _ in range(self._count)]
+        finite = np.isfinite(place[:, 0])
+        edges = np.flatnonzero(np.diff(finite.astype(np.int8))) + 1
+        for first, run in zip((0, *edges.tolist()), np.split(place, edges), strict=True):
+            if len(run) > 1 and finite[first] and np.any(run != run[0]):
+                found[arc[first]].append(run)
+        return found
 
 
-def _bent(start_mm: FloatArray, end_mm: FloatArray, seen_mm: FloatArray) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
-    """Return which chords are too far from what is seen between their ends; a point not shown counts as far."""
-    chord = end_mm - start_mm
+def _measured(
+    arc: IntArray, fraction: FloatArray, place: FloatArray, width: FloatArray, seen: FloatArray, following: FloatArray
+) -> _Nodes:
+    """Return nodes with what their intervals are like."""
+    bend = np.where(width > 0.0, _bend(place, following, seen), 0.0)
+    points = np.concatenate((place[:, np.newaxis], seen, following[:, np.newaxis]), axis=1)
+    hidden = np.isnan(points)
+    low = np.min(np.where(hidden, np.inf, points), axis=1)
+    high = np.max(np.where(hidden, -np.inf, points), axis=1)
+    # What lies between the points that were looked at may reach out of their box by about its own size.
+    grown = np.where(low <= high, high - low, 0.0)
+    return _Nodes(arc, fraction, place, width, seen, bend, low - grown, high + grown)
+
+
+def _bend(start: FloatArray, end: FloatArray, seen: FloatArray) -> FloatArray:
+    """Return how far chords are from what is seen between their ends; where only part can be shown, infinity."""
+    chord = end - start
     length = np.hypot(chord[:, 0], chord[:, 1])
-    off = seen_mm - start_mm[:, np.newaxis]
+    off = seen - start[:, np.newaxis]
     safe = np.where(length > 0.0, length, 1.0)
     along = (off @ chord[:, :, np.newaxis])[:, :, 0] / safe[:, np.newaxis]
     nearest = np.clip(along, 0.0, length[:, np.newaxis])
     from_chord = off - nearest[:, :, np.newaxis] * (chord / safe[:, np.newaxis])[:, np.newaxis]
-    far = np.hypot(from_chord[:, :, 0], from_chord[:, :, 1]) > TOLERANCE_MM
+    farthest = np.max(np.hypot(from_chord[:, :, 0], from_chord[:, :, 1]), axis=1)
     # Where the map is cut, all that is seen lies at the two ends of a long chord: on it, but not along it.
-    uneven = np.abs(along - np.array([0.25, 0.5, 0.75]) * length[:, np.newaxis]) > 0.25 * length[:, np.newaxis]
-    far |= uneven & (length[:, np.newaxis] > _LONG_CHORD_MM)
-    shown = np.isfinite(start_mm[:, 0]) & np.isfinite(end_mm[:, 0])
-    hidden = np.isnan(start_mm[:, 0]) & np.isnan(end_mm[:, 0]) & np.all(np.isnan(seen_mm[:, :, 0]), axis=1)
-    return np.asarray(np.where(shown, np.any(far | np.isnan(seen_mm[:, :, 0]), axis=1), ~hidden))
+    uneven = np.any(np.abs(along - _PROBES * length[:, np.newaxis]) > 0.25 * length[:, np.newaxis], axis=1)
+    farthest = np.where(uneven, np.maximum(farthest, length / _LONG_CHORD), farthest)
+    hidden = np.isnan(start[:, 0]) & np.isnan(end[:, 0]) & np.all(np.isnan(seen[:, :, 0]), axis=1)
+    return np.where(hidden, 0.0, np.where(np.isnan(farthest), np.inf, farthest))
 
 
-def _in_sight(
-    start_mm: FloatArray, end_mm: FloatArray, seen_mm: FloatArray, window_mm: Window
-) -> np.ndarray[tuple[int], np.dtype[np.bool_]]:
-    """Return which intervals may come into the window: their points' box, grown by its own size, meets it."""
-    points = np.concatenate((start_mm[:, np.newaxis], seen_mm, end_mm[:, np.newaxis]), axis=1)
-    low = np.min(np.where(np.isnan(points), np.inf, points), axis=1)
-    high = np.max(np.where(np.isnan(points), -np.inf, points), axis=1)
-    grown = np.where(np.isfinite(low) & np.isfinite(high), high, 0.0) - np.where(np.isfinite(low), low, 0.0)
-    left, bottom, right, top = window_mm
-    meets = (low - grown <= [right, top]) & (high + grown >= [left, bottom])
-    return np.asarray(np.all(meets, axis=1))
+def clip(start: FloatArray, step: FloatArray, window: Window) -> tuple[FloatArray, FloatArray]:
+    """Return the parts of segments, from 0 to 1, where each enters a window and leaves it; enter < leave where it does.
 
+    A segment with an end that can't be shown does not come into it.
 
-def _unbroken(place: FloatArray, torn: np.ndarray[tuple[int], np.dtype[np.bool_]]) -> list[FloatArray]:
-    pieces = np.split(place, np.flatnonzero(torn) + 1)
-    shown = [run for piece in pieces for run in _finite_runs(piece)]
-    return [run for run in shown if len(run) > 1]
-
-
-def _finite_runs(piece: FloatArray) -> list[FloatArray]:
-    finite = np.isfinite(piece[:, 0])
-    edges = np.flatnonzero(np.diff(finite.astype(np.int8))) + 1
-    return [run for run in np.split(piece, edges) if run.size and np.isfinite(run[0, 0])]
-
-
-def cut_at(polyline_mm: FloatArray, window_mm: Window) -> list[FloatArray]:
-    """Return what of a polyline, shape (n, 2), lies inside a window, as polylines that end on its edge.
+    Args:
+        start: Where each starts, shape (n, 2).
+        step: From there to its end.
+        window: Left, bottom, right and top.
 
     Source: Y.-D. Liang and B. A. Barsky, A new concept and method for line clipping, ACM Trans. Graph. 3 (1984) 1-22.
     """
-    left, bottom, right, top = window_mm
-    start, step = polyline_mm[:-1], np.diff(polyline_mm, axis=0)
+    left, bottom, right, top = window
     enter, leave = np.zeros(len(start)), np.ones(len(start))
     for axis, low, high in ((0, left, right), (1, bottom, top)):
         still = step[:, axis] == 0.0
         pace = np.where(still, 1.0, step[:, axis])
-        ends = np.sort(np.stack(((low - start[:, axis]) / pace, (high - start[:, axis]) / pace)), axis=0)
+        to_low, to_high = (low - start[:, axis]) / pace, (high - start[:, axis]) / pace
         out = still & ((start[:, axis] < low) | (start[:, axis] > high))
-        enter = np.where(out, 2.0, np.where(still, enter, np.maximum(enter, ends[0])))
-        leave = np.where(still, leave, np.minimum(leave, ends[1]))
+        enter = np.where(out, 2.0, np.where(still, enter, np.maximum(enter, np.minimum(to_low, to_high))))
+        leave = np.where(still, leave, np.minimum(leave, np.maximum(to_low, to_high)))
+    return enter, leave
+
+
+def cut_at(polyline: FloatArray, window: Window) -> list[FloatArray]:
+    """Return what of a polyline, shape (n, 2), lies inside a window, as polylines that end on its edge."""
+    start, step = polyline[:-1], np.diff(polyline, axis=0)
+    enter, leave = clip(start, step, window)
     kept = np.flatnonzero(enter < leave)
     if kept.size == 0:
         return []

@@ -13,7 +13,8 @@ from navcore.charts.paper import Paper, paper_named
 from navcore.charts.sheet import ChartPoint
 from navcore.charts.sheet_set import SheetRequest, make_sheets
 from navcore.charts.stereographic import Stereographic
-from navcore.charts.track import Arc, TrackLeg
+from navcore.charts.track import TrackLeg
+from navcore.plan.arcs import arcs_of
 from navcore.plan.model import Line, Trade
 from navcore.plan.revision import fingerprint
 from navcore.prints.caution import CAUTION
@@ -122,22 +123,9 @@ def _is_polar(solution: Solution, options: SheetOptions) -> bool:
 
 
 def _track_leg(solution: Solution, index: int) -> TrackLeg:
-    start, end = (waypoint.position for waypoint in solution.plan.waypoints[index : index + 2])
     leg = solution.legs[index]
     marks = leg.parts.points[1:-1] if leg.parts is not None else ()
-    return TrackLeg(_arcs(leg, start, end), _leg_words(leg), tuple(marks))
-
-
-def _arcs(leg: SailedLeg, start: Position, end: Position) -> tuple[Arc, ...]:
-    if leg.composite is not None and leg.composite.tangent_points:
-        reached, left = leg.composite.tangent_points
-        pieces = (
-            Arc(start, reached, great_circle=True),
-            Arc(reached, left, great_circle=False),
-            Arc(left, end, great_circle=True),
-        )
-        return tuple(arc for arc in pieces if arc.start != arc.end)
-    return (Arc(start, end, great_circle=leg.line is not Line.RHUMB),)
+    return TrackLeg(arcs_of(solution, index), _leg_words(leg), tuple(marks))
 
 
 def _leg_words(leg: SailedLeg) -> str:

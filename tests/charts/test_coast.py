@@ -10,7 +10,7 @@ import numpy as np
 import pytest
 from geographiclib.geodesic import Geodesic
 
-from navcore.charts.coast import ACCURACY, LONGEST_PIECE_M, load_coast
+from navcore.charts.coast import ACCURACY, LONGEST_PIECE_M, load_coast, load_shore_lines
 from navcore.earth.figure import WGS_84
 from navcore.errors import RangeError
 from navcore.lines import great_circle
@@ -102,7 +102,7 @@ def test_a_crossing_over_180_is_found() -> None:
 
 
 def test_a_window_gives_the_lines_that_touch_it_and_no_others() -> None:
-    lines = load_coast().lines_inside(-19.0, 177.0, -16.0, -179.0)
+    lines = load_shore_lines().inside(-19.0, 177.0, -16.0, -179.0)
     assert lines.lat_deg.size > 500
     starts = lines.starts
     touched = (lines.lat_deg >= -19.0) & (lines.lat_deg <= -16.0) & (np.mod(lines.lon_deg - 177.0, 360.0) <= 4.0)
@@ -111,8 +111,8 @@ def test_a_window_gives_the_lines_that_touch_it_and_no_others() -> None:
 
 
 def test_the_whole_world_is_every_line() -> None:
-    coast = load_coast()
-    assert coast.lines_inside(-90.0, -180.0, 90.0, 180.0).starts.size == coast.lines.starts.size
+    lines = load_shore_lines()
+    assert lines.inside(-90.0, -180.0, 90.0, 180.0).starts.size == lines.starts.size
 
 
 def test_a_thousand_legs_are_checked_whole() -> None:
@@ -144,7 +144,7 @@ def test_too_long_a_piece_and_a_cap_of_nothing_are_refused() -> None:
 
 
 def test_nothing_is_read_until_it_is_asked_for() -> None:
-    code = "import navcore.charts.coast as c; assert c.load_coast.cache_info().currsize == 0"
+    code = "import navcore.charts.coast as c; assert c.load_shore_lines.cache_info().currsize == 0"
     assert subprocess.run([sys.executable, "-c", code], check=False).returncode == 0
 
 
