@@ -50,6 +50,10 @@ class Desk:
         await self._pilot.pause()
         await self._pilot.press(*then)
 
+    async def resize(self, width: int, height: int) -> None:
+        """Give the terminal another size."""
+        await self._pilot.resize_terminal(width, height)
+
     async def until(self, condition: Callable[[], bool]) -> None:
         """Wait until something holds."""
         deadline = time.monotonic() + _PATIENCE_S

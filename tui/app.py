@@ -29,13 +29,23 @@ if TYPE_CHECKING:
     from tui.session import Session
 
 
+def _chart_page() -> type[Page]:
+    from tui.pages.chart import ChartPage
+
+    return ChartPage
+
+
 def _print_page() -> type[Page]:
     from tui.pages.prints import PrintPage
 
     return PrintPage
 
 
-PAGES: dict[str, Callable[[], type[Page]]] = {"passage": lambda: PassagePage, "print": _print_page}
+PAGES: dict[str, Callable[[], type[Page]]] = {
+    "passage": lambda: PassagePage,
+    "chart": _chart_page,
+    "print": _print_page,
+}
 """Command and page, in the order of their keys; a page joins by a line here and one in the table of commands."""
 
 _KEEP_TYPING_S = 0.3

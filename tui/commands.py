@@ -22,12 +22,16 @@ KEY_WORDS = {
     "down": "↓",
     "left": "←",
     "right": "→",
+    "plus": "+",
+    "equals_sign": "=",
+    "minus": "-",
     "pageup": "PgUp",
     "pagedown": "PgDn",
     "home": "Home",
     "end": "End",
     "f1": "F1",
     "f2": "F2",
+    "f3": "F3",
     "f7": "F7",
 }
 """How a key is written for people; any other as it is, Ctrl before it."""
@@ -38,6 +42,7 @@ class Where(StrEnum):
 
     PASSAGE = "Passage page"
     ROW = "In an open row"
+    CHART = "Chart page"
     PRINT = "Print page"
     EVERYWHERE = "Everywhere"
 
@@ -74,10 +79,12 @@ def key_shown(key: str) -> str:
     """Return a key as it is written for people."""
     if key.startswith("ctrl+"):
         return f"Ctrl+{key[5:].upper()}"
+    if key.startswith("shift+"):
+        return f"Shift+{KEY_WORDS[key[6:]]}"
     return KEY_WORDS.get(key, key)
 
 
-_P, _R, _E, _T = Where.PASSAGE, Where.ROW, Where.EVERYWHERE, Where.PRINT
+_P, _R, _C, _E, _T = Where.PASSAGE, Where.ROW, Where.CHART, Where.EVERYWHERE, Where.PRINT
 
 COMMANDS: tuple[Command, ...] = (
     Command("row.take", "Take the row", ("enter",), _R, "takes it and opens the next row", "take it", runs=False),
@@ -105,6 +112,27 @@ COMMANDS: tuple[Command, ...] = (
     Command("page.down", "Page down", ("pagedown",), _P, "goes a page down", runs=False),
     Command("first", "First row", ("home",), _P, "goes to the first row", runs=False),
     Command("last", "Last row", ("end",), _P, "goes to the row at the end, where a waypoint is added", runs=False),
+    Command("chart.left", "Left", ("left",), _C, "moves the cross left, the chart under it", runs=False),
+    Command("chart.right", "Right", ("right",), _C, "moves it right", runs=False),
+    Command("chart.up", "Up", ("up",), _C, "moves it up", runs=False),
+    Command("chart.down", "Down", ("down",), _C, "moves it down", runs=False),
+    Command("chart.left.little", "A cell left", ("shift+left",), _C, "moves it by one cell", runs=False),
+    Command("chart.right.little", "A cell right", ("shift+right",), _C, "moves it by one cell", runs=False),
+    Command("chart.up.little", "A cell up", ("shift+up",), _C, "moves it by one cell", runs=False),
+    Command("chart.down.little", "A cell down", ("shift+down",), _C, "moves it by one cell", runs=False),
+    Command("nearer", "Nearer", ("plus", "equals_sign"), _C, "shows half as much, twice as large", "nearer"),
+    Command("wider", "Wider", ("minus",), _C, "shows twice as much, half as large", "wider"),
+    Command("fit.plan", "Whole plan", ("f",), _C, "shows the whole plan", "plan"),
+    Command("fit.leg", "Whole leg", ("g",), _C, "shows the whole leg under the cursor", "leg"),
+    Command("projection", "Projection", ("p",), _C, "takes the next projection that can show the plan", "projection"),
+    Command("chart.add", "Add here", ("a", "insert"), _C, "adds a waypoint at the cross, below the cursor", "add here"),
+    Command("row.next", "Next row", ("pagedown",), _C, "puts the cursor on the next waypoint or leg", "next row"),
+    Command("row.back", "Row before", ("pageup",), _C, "puts the cursor on the waypoint or leg before"),
+    Command("to.waypoint", "To the waypoint", ("home",), _C, "puts the cross on the waypoint of the cursor"),
+    Command("chart.line", "Line", ("l",), _C, "sails the leg by the next line: rhumb line, great circle", "line"),
+    Command("other.lines", "Both lines", ("b",), _C, "shows or leaves out the line by which the leg is not sailed"),
+    Command("chart.delete", "Delete", ("d", "delete"), _C, "takes the waypoint of the cursor out"),
+    Command("shore", "Shore", ("c",), _C, "shows the shoreline (not for navigation), or leaves it out"),
     Command("sheet.next", "Next sheet", ("pagedown",), _T, "turns to the next sheet", "next sheet"),
     Command("sheet.back", "Sheet before", ("pageup",), _T, "turns back a sheet", "sheet before"),
     Command("sheet.right", "Look right", ("right",), _T, "shows what has no room on the right", runs=False),
@@ -116,6 +144,7 @@ COMMANDS: tuple[Command, ...] = (
     Command("write.csv", "Write CSV", ("v",), _T, "writes the leg table as CSV and says where it went", "CSV"),
     Command("save", "Save", ("s", "ctrl+s"), _E, "writes the plan to its file, whole or not at all", "save"),
     Command("passage", "Passage page", ("f2",), _E, "waypoints and legs, and the working of the leg"),
+    Command("chart", "Chart page", ("f3",), _E, "the plan on a chart, and what lies under the cross"),
     Command("print", "Print page", ("f7",), _E, "the leg table as it will be printed"),
     Command("page.next", "Next page", ("tab",), _E, "turns to the next page"),
     Command("help", "Keys", ("question_mark", "f1"), _E, "shows every key, page by page", "keys"),

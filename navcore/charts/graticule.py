@@ -99,6 +99,10 @@ class Graticule:
     meridians_deg: FloatArray
     limits_deg: FloatArray
 
+    def interval_min(self, *, is_meridian: bool) -> float:
+        """Return the interval between meridians or between parallels, minutes of arc."""
+        return self.lon_interval_min if is_meridian else self.lat_interval_min
+
     @cached_property
     def graduation(self) -> tuple[tuple[bool, FrameEnd], ...]:
         """Where the finer meridians and parallels meet the neat line: (is_meridian, end)."""

@@ -43,7 +43,25 @@ def thinned(place: FloatArray, step: float) -> FloatArray:
     kept[1:] = np.any(square[1:] != square[:-1], axis=1)
     # A gap differs from everything, itself included, so the point before it has still to be kept.
     kept[:-1] |= np.isnan(place[1:, 0])
-    return place[kept]
+    left: FloatArray = place[kept]
+    return left
+
+
+def _without_twins(place: FloatArray, step: float) -> FloatArray:
+    """Return thinned polylines, of islets that lie whole in one square of the step only one."""
+    is_gap = np.isnan(place[:, 0])
+    line = np.cumsum(is_gap) - is_gap
+    size = np.bincount(line[~is_gap], minlength=line[-1] + 1 if line.size else 0)
+    first = np.searchsorted(line, np.arange(size.size))
+    last = first + np.maximum(size, 1) - 1
+    square = np.floor(place[first] / step)
+    is_islet = np.all(square == np.floor(place[last] / step), axis=1) & (size <= 2)
+    islets = np.flatnonzero(is_islet)
+    _, once = np.unique(square[islets], axis=0, return_index=True)
+    kept = ~is_islet
+    kept[islets[once]] = True
+    left: FloatArray = place[kept[line]]
+    return left
 
 
 class _Runs(NamedTuple):
@@ -77,7 +95,7 @@ class LaidShore:
         """
         power = math.floor(math.log2(step))
         if power not in self._thinned:
-            self._thinned[power] = _in_runs(thinned(self._whole, 2.0**power))
+            self._thinned[power] = _in_runs(_without_twins(thinned(self._whole, 2.0**power), 2.0**power))
         runs = self._thinned[power]
         left, bottom, right, top = window
         meets = np.all((runs.low <= (right, top)) & (runs.high >= (left, bottom)), axis=1)

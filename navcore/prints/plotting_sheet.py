@@ -21,9 +21,10 @@ from navcore.prints.caution import CAUTION
 from navcore.prints.drawing import words_width_mm
 from navcore.prints.fonts import MISSING, printable
 from navcore.prints.leg_table import make_leg_table, method_line, refuse_unworked
+from navcore.prints.projection_words import true_scale_words
 from navcore.text.direction import format_angle, format_direction
 from navcore.text.distance import format_distance
-from navcore.text.position import format_latitude, format_longitude
+from navcore.text.position import format_longitude
 
 if TYPE_CHECKING:
     from navcore.charts.sheet import Sheet
@@ -145,9 +146,7 @@ def title_of(solution: Solution) -> str:
 def scale_words(sheet: Sheet) -> str:
     """Return the natural scale and where it holds."""
     scale = f"{sheet.plane.scale:,.0f}".replace(",", " ")
-    lats_deg = sheet.plane.projection.true_scale_lats_deg
-    where = " and ".join(format_latitude(lat_deg, 0 if lat_deg == round(lat_deg) else 1) for lat_deg in lats_deg)
-    return f"1:{scale} at {where or 'the centre'}".replace("00'", "")
+    return f"1:{scale} at {true_scale_words(sheet.plane.projection)}"
 
 
 def notes_of(solution: Solution, sheet: Sheet) -> tuple[str, ...]:

@@ -10,7 +10,7 @@ import numpy as np
 from navcore.charts.sheet import LETTER_MM
 from navcore.prints.drawing import Area, Drawing, Stroke, Words, words_width_mm
 from navcore.prints.sheet_foot import foot_marks
-from navcore.text.position import format_latitude, format_longitude
+from navcore.text.position import format_graticule_line
 
 if TYPE_CHECKING:
     from navcore.charts.graticule import FrameEnd, Graticule
@@ -107,7 +107,11 @@ def _frame_labels(sheet: Sheet, ends: list[tuple[bool, FrameEnd]]) -> list[Mark]
         here = [(is_meridian, end) for is_meridian, end in ends if end.side == side]
         wanted = _graduated_by(side, ends)
         for is_meridian, end in sorted(here, key=lambda item: (item[0] is not wanted, item[1].x_mm + item[1].y_mm)):
-            text = _frame_label(end.value_deg, is_meridian, sheet.graticule)
+            text = format_graticule_line(
+                end.value_deg,
+                is_meridian=is_meridian,
+                interval_min=sheet.graticule.interval_min(is_meridian=is_meridian),
+            )
             width = words_width_mm(text, LETTER_MM)
             along = end.x_mm if up else end.y_mm
             span = (along - width / 2.0 - 1.0, along + width / 2.0 + 1.0)
@@ -129,16 +133,6 @@ def _label_at(text: str, end: FrameEnd, width: float, outwards: tuple[float, flo
     # Turned to be read from the right, the letters' tops to the left.
     base = end.x_mm - off if right < 0.0 else end.x_mm + off + (1.0 - _BASE) * LETTER_MM
     return Words(text, base, end.y_mm - width / 2.0, LETTER_MM, 90.0)
-
-
-def _frame_label(value_deg: float, is_meridian: bool, graticule: Graticule) -> str:
-    interval_min = graticule.lon_interval_min if is_meridian else graticule.lat_interval_min
-    if is_meridian and abs(value_deg) == 180.0:
-        return "180°"
-    text = (format_longitude if is_meridian else format_latitude)(value_deg, 1 if interval_min < 1.0 else 0)
-    if value_deg == 0.0:
-        text = text[:-1]
-    return text.replace("00'", "") if interval_min >= 60.0 else text
 
 
 def _latitude_scale(sheet: Sheet) -> list[Mark]:

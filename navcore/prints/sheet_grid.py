@@ -7,9 +7,9 @@ from typing import TYPE_CHECKING, NamedTuple
 from navcore.charts.grid import grid_courses, has_grid
 from navcore.charts.lambert import Lambert
 from navcore.charts.stereographic import Stereographic
+from navcore.prints.projection_words import format_convergence
 from navcore.prints.sheet_table import Table
 from navcore.text.direction import format_direction
-from navcore.text.number import format_number
 
 if TYPE_CHECKING:
     from navcore.charts.projection import Projection
@@ -61,9 +61,9 @@ def grid_table(solution: Solution, projection: Projection) -> Table | None:
     rows = tuple(
         (
             str(leg.leg),
-            f"{_convergence(leg.start_convergence_deg)}",
+            format_convergence(leg.start_convergence_deg),
             format_direction(leg.start_grid_course_deg, "G"),
-            f"{_convergence(leg.end_convergence_deg)}",
+            format_convergence(leg.end_convergence_deg),
             format_direction(leg.end_grid_course_deg, "G"),
         )
         for leg in legs
@@ -73,8 +73,3 @@ def grid_table(solution: Solution, projection: Projection) -> Table | None:
         ("leg", "start: convergence", "course", "end: convergence", "course"),
         rows,
     )
-
-
-def _convergence(convergence_deg: float) -> str:
-    side = "E" if convergence_deg >= 0.0 else "W"
-    return f"{format_number(abs(convergence_deg))}° {side}"

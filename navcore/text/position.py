@@ -104,6 +104,22 @@ def format_position(position: Position, decimals: int = 1) -> str:
     return f"{format_latitude(position.lat_deg, decimals)} {format_longitude(position.lon_deg, decimals)}"
 
 
+def format_graticule_line(value_deg: float, *, is_meridian: bool, interval_min: float) -> str:
+    """Return what stands at a meridian or parallel of a graticule: 45°N, 45°30'N, 180°, 0°; no zeros beyond need.
+
+    Args:
+        value_deg: Its longitude or latitude.
+        is_meridian: Which of the two.
+        interval_min: Between neighbours, minutes of arc.
+    """
+    if is_meridian and abs(value_deg) == 180.0:
+        return "180°"
+    text = (format_longitude if is_meridian else format_latitude)(value_deg, 1 if interval_min < 1.0 else 0)
+    if value_deg == 0.0:
+        text = text[:-1]
+    return text.replace("00'", "") if interval_min >= 60.0 else text
+
+
 def write_position(position: Position) -> str:
     """Return a text that parse_position reads as the very same two floats.
 

@@ -10,6 +10,7 @@ from tests.support import ROOT
 from tui.app import PAGES, Workbook
 from tui.commands import COMMANDS, Command, Where, commands_of, readme_keys
 from tui.pages import file_tasks
+from tui.pages.chart import ChartPage
 from tui.pages.passage import PassagePage
 from tui.pages.prints import PrintPage
 from tui.present.key_list import key_lines
@@ -23,7 +24,7 @@ NEVER_ARRIVE = {"ctrl+i", "ctrl+m", "ctrl+h", "ctrl+j", "ctrl+left_square_bracke
 
 @pytest.mark.parametrize("command", COMMANDS, ids=lambda command: command.id)
 def test_every_command_is_done_somewhere_and_told_in_words(command: Command) -> None:
-    tasks = {**file_tasks.TASKS, **PassagePage.tasks, **PrintPage.tasks}
+    tasks = {**file_tasks.TASKS, **PassagePage.tasks, **ChartPage.tasks, **PrintPage.tasks}
     assert command.id in tasks or command.id in OTHERS
     assert command.words
     assert len(command.does) < 62
@@ -34,10 +35,10 @@ def test_every_command_is_done_somewhere_and_told_in_words(command: Command) -> 
 def test_every_task_is_a_command() -> None:
     known = {command.id for command in COMMANDS}
     assert len(known) == len(COMMANDS)
-    assert known >= {*file_tasks.TASKS, *PassagePage.tasks, *PrintPage.tasks}
+    assert known >= {*file_tasks.TASKS, *PassagePage.tasks, *ChartPage.tasks, *PrintPage.tasks}
 
 
-@pytest.mark.parametrize("page", [Where.PASSAGE, Where.PRINT])
+@pytest.mark.parametrize("page", [Where.PASSAGE, Where.CHART, Where.PRINT])
 def test_no_key_says_two_things_on_one_page(page: Where) -> None:
     keys = Counter(key for where in (page, Where.EVERYWHERE) for command in commands_of(where) for key in command.keys)
     assert [key for key, count in keys.items() if count > 1] == []

@@ -50,6 +50,9 @@ def plan(tmp_path: Path) -> Path:
         ("row_80x24", MIDDLE, ("down", "down", "a", *"265/400")),
         ("working_80x24", MIDDLE, ("down", "m")),
         ("leg_80x24", MIDDLE, ("down", "enter")),
+        ("chart_80x24", MIDDLE, ("down", "f3")),
+        ("chart_120x40", LARGE, ("f3", "p", "p", "plus")),
+        ("chart_40x12", SMALL, ("f3",)),
         ("print_80x24", MIDDLE, ("f7",)),
         ("keys_80x24", MIDDLE, ("question_mark",)),
     ],
@@ -104,6 +107,7 @@ def test_names_of_any_kind_are_shown_and_never_obeyed(tmp_path: Path, size: tupl
             ("up", "e", "escape", "enter", "escape"),
             ("end", "up", "up", "up", "up", "up", "enter", "escape", "c", "z"),
             ("i", "escape", "o", "escape", "right", "right"),
+            ("f3", "plus", "home", "plus", "pagedown", "minus", "p", "a", "z"),
             ("f7", "t", "escape", "c", "escape", "f2"),
             ("ctrl+p", "escape", "d", "d"),
         )
@@ -117,7 +121,7 @@ def test_names_of_any_kind_are_shown_and_never_obeyed(tmp_path: Path, size: tupl
 
 def test_by_night_nothing_is_bright_and_nothing_but_red(tmp_path: Path, plan: Path) -> None:
     walks = ((), ("m",), ("enter", "escape"), ("i", "escape"), ("ctrl+p", "escape"), ("d", "q", "escape"))
-    more = (("question_mark", "escape"), ("o", "d", "escape"), ("f7", "c", "escape"))
+    more = (("question_mark", "escape"), ("o", "d", "escape"), ("f3", "p"), ("f7", "c", "escape"))
 
     async def journey(desk: Desk) -> None:
         desk.app.theme = LIGHTS[-1].name
@@ -142,6 +146,10 @@ def test_without_colour_the_cursor_is_still_seen(tmp_path: Path, plan: Path, mon
             await desk.settled()
             assert all(red == green == blue for red, green, blue in desk.colours())
             assert sum(line.startswith("►") for line in desk.lines()) == 1
+            await desk.press("f3")
+            await desk.settled()
+            assert all(red == green == blue for red, green, blue in desk.colours())
+            await desk.press("f2")
 
     use(journey, tmp_path / "state", plan)
 

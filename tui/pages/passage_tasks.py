@@ -8,6 +8,7 @@ from typing import TYPE_CHECKING
 from navcore.plan import edit
 from navcore.plan.model import Leg, Line
 from navcore.text.plain import visible
+from tui.commands import Where
 from tui.pages.row_tasks import open_below, open_to_change
 from tui.present.rows import RowKind, kind_of, leg_of, row_count, row_of_waypoint, waypoint_of
 
@@ -15,8 +16,10 @@ if TYPE_CHECKING:
     from collections.abc import Callable, Mapping, Sequence
 
     from navcore.plan.model import Plan
+    from tui.pages.desk import Page
     from tui.pages.passage import PassagePage
 
+NO_LEG = "there is no leg yet: a second waypoint makes one"
 _NOT_HERE = "that is done to a waypoint: put the cursor on one"
 
 
@@ -61,7 +64,7 @@ def _more(page: PassagePage) -> None:
     page.app.push_screen(Form(sheet), filled)
 
 
-def _delete(page: PassagePage) -> None:
+def _delete(page: Page) -> None:
     index = _waypoint(page)
     if index is None:
         page.desk.say(_NOT_HERE, alert=True)
@@ -97,15 +100,19 @@ def _reverse(page: PassagePage) -> None:
     page.desk.commit("reverse the passage", edit.reverse)
 
 
-def _cycle_line(page: PassagePage) -> None:
+def _cycle_line(page: Page) -> None:
     plan = page.session.plan
     index = leg_of(plan, page.session.row)
     if index is None:
-        page.desk.say("there is no leg yet: a second waypoint makes one", alert=True)
+        page.desk.say(NO_LEG, alert=True)
         return
     leg = plan.legs[index]
     following = _line_after(plan, leg)
-    hint = "" if leg.limit_deg is not None else "; a composite takes a limiting latitude: Enter on the leg"
+    hint = (
+        ""
+        if leg.limit_deg is not None or page.where is not Where.PASSAGE
+        else "; a composite takes a limiting latitude: Enter on the leg"
+    )
     if page.desk.commit(f"leg {index + 1} by {following.value}", lambda p: _with_line(p, index, following)) and hint:
         page.desk.say(f"leg {index + 1} by {following.value} · z takes it back{hint}")
 
@@ -126,7 +133,7 @@ def _margin(page: PassagePage) -> None:
     page.show_margin(wanted=not page.margin_is_seen)
 
 
-def _waypoint(page: PassagePage) -> int | None:
+def _waypoint(page: Page) -> int | None:
     return waypoint_of(page.session.plan, page.session.row)
 
 

@@ -61,3 +61,8 @@ def place_below(plan: Plan, row: int) -> int:
 def place_above(plan: Plan, row: int) -> int:
     """Return the index that a waypoint gets which is added above a row."""
     return min((row + 1) // 2, len(plan.waypoints))
+
+
+def waypoint_before(plan: Plan, row: int) -> int | None:
+    """Return the waypoint of a row, or the last one above it; None in an empty plan."""
+    return min(row // 2, len(plan.waypoints) - 1) if plan.waypoints else None
