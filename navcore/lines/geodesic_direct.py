@@ -94,11 +94,6 @@ class GeodesicLine:
     cos_omega1: FloatArray
     epsilon: FloatArray
 
-    @property
-    def arc1_deg(self) -> FloatArray:
-        """σ1: the arc from the northward crossing of the equator to the first point, [-180, 180]."""
-        return np.degrees(np.arctan2(self.sin_sigma1, self.cos_sigma1))
-
     def at_arc(self, arc_deg: npt.ArrayLike) -> GeodesicPoint:
         """Return the points at arcs on the auxiliary sphere; the arcs and the line broadcast.
 

@@ -132,12 +132,6 @@ def _refuse_from_above(text: str, entry: Entry, plan: Plan, index: int) -> None:
         raise ParseError(text, (0, len(text)), reason, "mend the line above first")
 
 
-def _require_start_read(typed: str, *, starts_above: bool) -> None:
-    if starts_above:
-        reason = "the line above could not be read, and this one starts from it"
-        raise ParseError(typed, (0, len(typed)), reason, "mend the line above first")
-
-
 def _above(text: str, plan: Plan, index: int) -> Waypoint:
     if not 0 < index <= len(plan.waypoints):
         reason = "no waypoint stands above for a course and distance to start from"

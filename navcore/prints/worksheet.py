@@ -44,7 +44,6 @@ LAST_FIGURE = (
     "last figure, a result should not."
 )
 
-
 BY_TANGENT = "so near east or west, take sec C = √(1 + tan² C): the secant of a rounded angle is coarse"
 
 
@@ -158,10 +157,7 @@ def _section(working: Working, leg: LegComparison) -> Section:
     rounded = tuple(_result_line(working, symbol) for symbol in working.results)
     remarks = working.remarks
     if near_east_west and any("sec C" in step.words for step in working.steps):
-        remarks = (
-            *remarks,
-            "so near east or west, take sec C = √(1 + tan² C): the secant of a rounded angle is coarse",
-        )
+        remarks = (*remarks, BY_TANGENT)
     return Section(f"{working.method} ({working.basis})", (*lines, *rounded), remarks)
 
 

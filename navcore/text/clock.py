@@ -12,8 +12,6 @@ from navcore.text.scan import plain
 
 INSTANT_UNIT = "UTC"
 
-_DAYS = ("Mon", "Tue", "Wed", "Thu", "Fri", "Sat", "Sun")
-_MONTHS = ("Jan", "Feb", "Mar", "Apr", "May", "Jun", "Jul", "Aug", "Sep", "Oct", "Nov", "Dec")
 _MINUTE = timedelta(minutes=1)
 _MOST_DAYS = 9999
 _MOST_OFFSET = timedelta(hours=14)
@@ -173,17 +171,6 @@ def format_instant_figure(instant: datetime) -> str:
     """Return an instant as format_instant does, without UTC: for a column that has it in its heading."""
     minute = _nearest_minute(instant)
     return minute.isoformat(" ", "minutes").removesuffix("+00:00")
-
-
-def format_instant_short(instant: datetime) -> str:
-    """Return an instant without its year and zone, such as Thu 04 Mar 14:00: for rows below a heading that says both.
-
-    Raises:
-        NavError: The instant has no zone, or lies outside the years 1 to 9999 in UTC.
-    """
-    minute = _nearest_minute(instant)
-    day = f"{_DAYS[minute.weekday()]} {minute.day:02d} {_MONTHS[minute.month - 1]}"
-    return f"{day} {minute.hour:02d}:{minute.minute:02d}"
 
 
 def _nearest_minute(instant: datetime) -> datetime:

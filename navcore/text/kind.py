@@ -94,15 +94,3 @@ UNITS: Mapping[Kind, str] = MappingProxyType(
 )
 """The unit that a heading shows; a kind that is missing here carries its marks in the figure. In aviation, speeds are
 in distance.AVIATION_SPEED_UNIT."""
-
-
-def with_unit(kind: Kind, figure: str, unit: str | None = None) -> str:
-    """Return a figure as it stands where no heading names its unit; "" stays "".
-
-    Args:
-        kind: What the figure is.
-        figure: From the kind's formatter.
-        unit: In place of the kind's usual one, such as the aviation word for knots.
-    """
-    shown = UNITS.get(kind, "") if unit is None else unit
-    return f"{figure} {shown}" if figure and shown else figure

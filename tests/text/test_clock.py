@@ -14,7 +14,6 @@ from navcore.text.clock import (
     format_duration,
     format_instant,
     format_instant_figure,
-    format_instant_short,
     parse_duration,
     parse_instant,
 )
@@ -91,21 +90,20 @@ def test_instants_are_read_in_utc(text: str, instant: datetime) -> None:
 
 
 @pytest.mark.parametrize(
-    ("instant", "figure", "short"),
+    ("instant", "figure"),
     [
-        (DEPARTURE, "2027-03-04 14:00", "Thu 04 Mar 14:00"),
-        (DEPARTURE + timedelta(seconds=29.9), "2027-03-04 14:00", "Thu 04 Mar 14:00"),
-        (DEPARTURE + timedelta(seconds=30), "2027-03-04 14:01", "Thu 04 Mar 14:01"),
-        (datetime(2027, 12, 31, 23, 59, 30, tzinfo=UTC), "2028-01-01 00:00", "Sat 01 Jan 00:00"),
-        (datetime(2027, 3, 5, 1, 0, tzinfo=timezone(timedelta(hours=11))), "2027-03-04 14:00", "Thu 04 Mar 14:00"),
-        (datetime(9999, 12, 31, 23, 59, 59, tzinfo=UTC), "9999-12-31 23:59", "Fri 31 Dec 23:59"),
-        (datetime(1, 1, 1, tzinfo=UTC), "0001-01-01 00:00", "Mon 01 Jan 00:00"),
+        (DEPARTURE, "2027-03-04 14:00"),
+        (DEPARTURE + timedelta(seconds=29.9), "2027-03-04 14:00"),
+        (DEPARTURE + timedelta(seconds=30), "2027-03-04 14:01"),
+        (datetime(2027, 12, 31, 23, 59, 30, tzinfo=UTC), "2028-01-01 00:00"),
+        (datetime(2027, 3, 5, 1, 0, tzinfo=timezone(timedelta(hours=11))), "2027-03-04 14:00"),
+        (datetime(9999, 12, 31, 23, 59, 59, tzinfo=UTC), "9999-12-31 23:59"),
+        (datetime(1, 1, 1, tzinfo=UTC), "0001-01-01 00:00"),
     ],
 )
-def test_instants_are_printed_to_the_minute_with_carry(instant: datetime, figure: str, short: str) -> None:
+def test_instants_are_printed_to_the_minute_with_carry(instant: datetime, figure: str) -> None:
     assert format_instant_figure(instant) == figure
     assert format_instant(instant) == f"{figure} UTC"
-    assert format_instant_short(instant) == short
 
 
 @given(st.datetimes(timezones=st.just(UTC)))

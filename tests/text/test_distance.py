@@ -8,7 +8,7 @@ import pytest
 from hypothesis import given
 from hypothesis import strategies as st
 
-from navcore.constants import METRES_PER_FOOT, METRES_PER_NAUTICAL_MILE
+from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.errors import ParseError, RangeError
 from navcore.text.distance import (
     AVIATION_SPEED_UNIT,
@@ -39,7 +39,7 @@ if TYPE_CHECKING:
         ("10 km", 10_000.0 / METRES_PER_NAUTICAL_MILE),
         ("10 KM", 10_000.0 / METRES_PER_NAUTICAL_MILE),
         ("1852 m", 1.0),
-        ("1000 ft", pytest.approx(1000.0 * METRES_PER_FOOT / METRES_PER_NAUTICAL_MILE, rel=1e-15)),
+        ("1000 ft", pytest.approx(304.8 / METRES_PER_NAUTICAL_MILE, rel=1e-15)),
         ("0", 0.0),
     ],
 )

@@ -114,7 +114,9 @@ class ChartPage(Page, can_focus=True):
         if scene is None or scene.solution is not solution or scene.projection != view.projection:
             self._scene = scene = Scene(solution, view.projection, scene)
         self.query_one(ChartCanvas).show(picture(scene, view, row, self.shown).lines())
-        self.query_one("#chart-words", Static).update(content(readout(solution, view, row, view.columns - 2)))
+        self.query_one("#chart-words", Static).update(
+            content(readout(solution, view, row, view.columns - 2)), layout=False
+        )
         if self.shown.shore and scene.laid_shore is None:
             self.set_timer(_SHORE_AFTER_S, self._lay_shore)
 

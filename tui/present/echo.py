@@ -19,9 +19,6 @@ if TYPE_CHECKING:
     from navcore.plan.entry import Entry
     from tui.present.tone import Line as ShownLine
 
-LINES = 3
-"""How many lines an echo takes, where the width allows."""
-
 _LABEL = 14
 
 
