@@ -13,16 +13,16 @@ from navcore.files.planfile import read_plan
 from navcore.plan.model import Craft, Leg, Line, Plan, Trade, Waypoint
 from navcore.plan.solve import Solution, solve
 from navcore.position import Position
-from navcore.prints.fonts import width_pt
-from navcore.prints.page_layout import MARGIN_PT, Arrowhead, Frame, Paper, PaperName, Rule, Text
-from navcore.prints.typeset import SMALLEST_PT
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.page_layout import MARGIN_PT, Arrowhead, Frame, Paper, PaperName, Rule, Text
+from navcore.prints.paper.typeset import SMALLEST_PT
 from navcore.sailings.parts import Parts, PartsRule
 
 if TYPE_CHECKING:
     from collections.abc import Iterator, Sequence
     from pathlib import Path
 
-    from navcore.prints.page_layout import Mark
+    from navcore.prints.paper.page_layout import Mark
 
 PAPERS = [Paper(name, landscape) for name in PaperName for landscape in (True, False)]
 

@@ -11,8 +11,8 @@ from itertools import zip_longest
 from typing import TYPE_CHECKING, NamedTuple
 
 from navcore.plan.quantities import Row
-from navcore.prints.fonts import width_pt
-from navcore.prints.typeset import SMALLEST_PT, fold, widest_word_pt
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.typeset import SMALLEST_PT, fold, widest_word_pt
 
 if TYPE_CHECKING:
     from collections.abc import Sequence

@@ -10,17 +10,17 @@ from itertools import zip_longest
 from typing import TYPE_CHECKING
 
 from navcore.plan.quantities import Row
-from navcore.prints.fonts import width_pt
 from navcore.prints.grid import BOX_PITCH_PT, BOXES, GAP_PT, NUMBER_PT, heading_lines
-from navcore.prints.page_layout import Arrowhead, Block, Frame, Rule, Strip, Text, moved
-from navcore.prints.typeset import SMALLEST_PT, fold
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.page_layout import Arrowhead, Block, Frame, Rule, Strip, Text, moved
+from navcore.prints.paper.typeset import SMALLEST_PT, fold
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator, Sequence
 
     from navcore.prints.grid import Cell, Grid
     from navcore.prints.leg_table import LegTable, TableColumn, TableRow
-    from navcore.prints.page_layout import Group, Mark
+    from navcore.prints.paper.page_layout import Group, Mark
     from navcore.prints.part_rows import PartRow
 
 BOX_WORDS = ("entered", "circled", "ticked", "crossed")

@@ -7,21 +7,21 @@ from typing import TYPE_CHECKING
 
 from navcore.plan.model import Trade
 from navcore.prints.column_choice import paper_columns
-from navcore.prints.fonts import MISSING, printable
 from navcore.prints.grid import make_grid
 from navcore.prints.ladder import HAIR_PT, HEAVY_PT, headings, ladder
 from navcore.prints.leg_table import make_leg_table
-from navcore.prints.page_layout import MARGIN_PT, Block, Paper, Rule, Strip, Text, paginate
-from navcore.prints.paper_head import make_head, set_head
-from navcore.prints.pdf_canvas import write_pages
-from navcore.prints.typeset import SMALLEST_PT, fold
+from navcore.prints.paper.fonts import MISSING, printable
+from navcore.prints.paper.head import make_head, set_head
+from navcore.prints.paper.page_layout import MARGIN_PT, Block, Paper, Rule, Strip, Text, paginate
+from navcore.prints.paper.pdf_canvas import write_pages
+from navcore.prints.paper.typeset import SMALLEST_PT, fold
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Iterator
 
     from navcore.plan.solve import Solution
     from navcore.prints.leg_table import LegTable
-    from navcore.prints.page_layout import Group, Mark
+    from navcore.prints.paper.page_layout import Group, Mark
 
 KINDS = {Trade.MARINE: "Leg table", Trade.AVIATION: "Navigation log"}
 

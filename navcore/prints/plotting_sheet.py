@@ -18,10 +18,10 @@ from navcore.plan.arcs import arcs_of
 from navcore.plan.model import Line, Trade
 from navcore.plan.revision import fingerprint
 from navcore.prints.caution import CAUTION
-from navcore.prints.drawing import words_width_mm
-from navcore.prints.fonts import MISSING, printable
 from navcore.prints.leg_table import make_leg_table, method_line, refuse_unworked
+from navcore.prints.paper.fonts import MISSING, printable
 from navcore.prints.projection_words import true_scale_words
+from navcore.prints.sheets.drawing import words_width_mm
 from navcore.text.direction import format_angle, format_direction
 from navcore.text.distance import format_distance
 from navcore.text.position import format_longitude

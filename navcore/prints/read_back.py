@@ -12,22 +12,22 @@ from typing import TYPE_CHECKING
 from navcore.plan.model import Line
 from navcore.plan.quantities import QUANTITIES, rows_of
 from navcore.plan.quantities import Row as PlanRow
-from navcore.prints.fonts import width_pt
 from navcore.prints.grid import NUMBER_PT
 from navcore.prints.ladder import HAIR_PT, HEAVY_PT, LADDER_PT, PLAIN_PT, centred, numbered
 from navcore.prints.leg_table import make_leg_table
-from navcore.prints.page_layout import MARGIN_PT, Arrowhead, Block, Frame, Paper, Rule, Strip, Text, paginate
-from navcore.prints.paper_head import ended, make_head, set_head
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.head import ended, make_head, set_head
+from navcore.prints.paper.page_layout import MARGIN_PT, Arrowhead, Block, Frame, Paper, Rule, Strip, Text, paginate
+from navcore.prints.paper.pdf_canvas import write_pages
+from navcore.prints.paper.typeset import SMALLEST_PT, fold
 from navcore.prints.part_rows import part_rows
 from navcore.prints.pdf import PrintableText, PrintedPdf, in_full, lacking_notice, notes, printable_table
-from navcore.prints.pdf_canvas import write_pages
-from navcore.prints.typeset import SMALLEST_PT, fold
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from navcore.plan.solve import Solution
-    from navcore.prints.page_layout import Group, Mark
+    from navcore.prints.paper.page_layout import Group, Mark
     from navcore.prints.part_rows import PartRow
 
 KIND = "Read-back sheet"

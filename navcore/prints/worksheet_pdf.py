@@ -5,16 +5,16 @@ from __future__ import annotations
 from typing import TYPE_CHECKING
 
 from navcore.prints.caution import CAUTION
-from navcore.prints.fonts import width_pt
-from navcore.prints.page_layout import MARGIN_PT, Block, Furniture, Paper, Rule, Strip, Text, paginate
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.page_layout import MARGIN_PT, Block, Furniture, Paper, Rule, Strip, Text, paginate
+from navcore.prints.paper.pdf_canvas import write_pages
+from navcore.prints.paper.typeset import SMALLEST_PT, fold
 from navcore.prints.pdf import PrintableText, PrintedPdf
-from navcore.prints.pdf_canvas import write_pages
-from navcore.prints.typeset import SMALLEST_PT, fold
 
 if TYPE_CHECKING:
     from collections.abc import Iterator, Sequence
 
-    from navcore.prints.page_layout import Mark
+    from navcore.prints.paper.page_layout import Mark
     from navcore.prints.worksheet import LegSheet, Result, Section
 
 _PAPER = Paper(landscape=False)

@@ -16,10 +16,10 @@ from navcore.plan.revision import fingerprint
 from navcore.plan.solve import Solution, solve
 from navcore.prints.caution import CAUTION
 from navcore.prints.column_choice import paper_columns
-from navcore.prints.fonts import MISSING, printable
 from navcore.prints.json import write_json
 from navcore.prints.leg_table import ROWS_ROUNDED
-from navcore.prints.page_layout import Frame, Paper, PaperName, Text
+from navcore.prints.paper.fonts import MISSING, printable
+from navcore.prints.paper.page_layout import Frame, Paper, PaperName, Text
 from navcore.prints.pdf import lay_out, write_pdf
 from navcore.text.kind import FORMATTERS, Kind
 from tests.papers import HOSTILE_NAMES, PAPERS, faults, hostile_plan, plan_of, rows_of_text, solved, text_of

@@ -22,12 +22,12 @@ from navcore.plan.model import Leg, Plan, Trade, Waypoint
 from navcore.plan.solve import solve
 from navcore.position import Position
 from navcore.prints.caution import CAUTION
-from navcore.prints.drawing import Area, Stroke, Words, words_width_mm
 from navcore.prints.plotting_sheet import NO_DANGERS, SheetOptions, lacking, plotting_sheets
-from navcore.prints.plotting_sheet_json import write_sheets_json
-from navcore.prints.sheet_foot import CHECK_BAR_MM
-from navcore.prints.sheet_grid import grid_legs
-from navcore.prints.sheet_pages import draw_pages, write_sheet_svg, write_sheets_pdf
+from navcore.prints.sheets.drawing import Area, Stroke, Words, words_width_mm
+from navcore.prints.sheets.foot import CHECK_BAR_MM
+from navcore.prints.sheets.grid_courses import grid_legs
+from navcore.prints.sheets.json import write_sheets_json
+from navcore.prints.sheets.pages import draw_pages, write_sheet_svg, write_sheets_pdf
 from tests.papers import HOSTILE_NAMES, plan_of, solved
 from tests.support import DEMOS, ROOT
 
@@ -35,7 +35,7 @@ if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from navcore.plan.solve import Solution
-    from navcore.prints.drawing import Drawing
+    from navcore.prints.sheets.drawing import Drawing
     from navcore.trigonometry import FloatArray
 
 NORTH_PACIFIC = ROOT / "routes_demo" / "north_pacific_winter.toml"

@@ -7,7 +7,7 @@ import pytest
 from navcore.plan.model import Plan, Trade
 from navcore.plan.quantities import QUANTITIES
 from navcore.plan.solve import solve
-from navcore.prints.page_layout import Frame, Paper, Text
+from navcore.prints.paper.page_layout import Frame, Paper, Text
 from navcore.prints.read_back import grouped, lay_out_read_back, write_read_back
 from tests.papers import PAPERS, faults, hostile_plan, plan_of, solved, text_of
 from tests.support import DEMOS

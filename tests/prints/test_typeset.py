@@ -3,8 +3,8 @@ from __future__ import annotations
 from hypothesis import given
 from hypothesis import strategies as st
 
-from navcore.prints.fonts import MISSING, printable, width_pt
-from navcore.prints.typeset import fold, fold_at_most
+from navcore.prints.paper.fonts import MISSING, printable, width_pt
+from navcore.prints.paper.typeset import fold, fold_at_most
 from tests.strategies import odd_texts
 
 

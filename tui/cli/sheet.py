@@ -142,8 +142,8 @@ def _wrong_sheet(number: int | None, medium: str, count: int) -> str:
 
 
 def _written(solution: Solution, sheets: SheetSet, medium: str, number: int | None) -> bytes:
-    from navcore.prints.plotting_sheet_json import write_sheets_json
-    from navcore.prints.sheet_pages import write_sheet_svg, write_sheets_pdf
+    from navcore.prints.sheets.json import write_sheets_json
+    from navcore.prints.sheets.pages import write_sheet_svg, write_sheets_pdf
 
     if medium == "pdf":
         return write_sheets_pdf(solution, sheets)

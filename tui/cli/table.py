@@ -115,7 +115,7 @@ def _text(solution: Solution, arguments: argparse.Namespace, medium: str) -> str
 
 def _pdf(solution: Solution, arguments: argparse.Namespace) -> bytes:
     """Return the sheet asked for; characters that its font lacks are named on standard error."""
-    from navcore.prints.page_layout import Paper, PaperName
+    from navcore.prints.paper.page_layout import Paper, PaperName
     from navcore.prints.pdf import write_pdf
     from navcore.prints.read_back import write_read_back
 

@@ -26,7 +26,7 @@ if TYPE_CHECKING:
     from textual.app import ComposeResult
     from textual.binding import BindingType
 
-    from navcore.prints.page_layout import Paper
+    from navcore.prints.paper.page_layout import Paper
 
 
 class PrintPage(Page, can_focus=True):

@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from navcore.prints.page_layout import Paper, PaperName
+from navcore.prints.paper.page_layout import Paper, PaperName
 
 PAPERS = tuple(Paper(name, landscape) for name in PaperName for landscape in (True, False))
 """In the order in which the command steps through them."""

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
-from navcore.prints.fonts import width_pt
+from navcore.prints.paper.fonts import width_pt
 
 if TYPE_CHECKING:
     from navcore.trigonometry import FloatArray

@@ -8,13 +8,13 @@ from typing import TYPE_CHECKING
 
 from reportlab.pdfgen.canvas import Canvas
 
-from navcore.prints.drawing import MILLIMETRES_PER_POINT, Area, Stroke, Words
-from navcore.prints.fonts import SANS, SANS_BOLD, register_fonts
+from navcore.prints.paper.fonts import SANS, SANS_BOLD, register_fonts
+from navcore.prints.sheets.drawing import MILLIMETRES_PER_POINT, Area, Stroke, Words
 
 if TYPE_CHECKING:
     from collections.abc import Iterable
 
-    from navcore.prints.drawing import Drawing
+    from navcore.prints.sheets.drawing import Drawing
 
 _MM = 1.0 / MILLIMETRES_PER_POINT
 

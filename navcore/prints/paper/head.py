@@ -7,9 +7,9 @@ from typing import TYPE_CHECKING
 
 from navcore.plan.model import Trade
 from navcore.plan.revision import fingerprint
-from navcore.prints.fonts import width_pt
-from navcore.prints.page_layout import MARGIN_PT, Furniture, Rule, Strip, Text
-from navcore.prints.typeset import SMALLEST_PT, fold, fold_at_most
+from navcore.prints.paper.fonts import width_pt
+from navcore.prints.paper.page_layout import MARGIN_PT, Furniture, Rule, Strip, Text
+from navcore.prints.paper.typeset import SMALLEST_PT, fold, fold_at_most
 from navcore.text.clock import format_instant
 from navcore.text.kind import FORMATTERS, Kind
 
@@ -18,7 +18,7 @@ if TYPE_CHECKING:
 
     from navcore.plan.model import Plan
     from navcore.prints.leg_table import LegTable
-    from navcore.prints.page_layout import Mark, Paper
+    from navcore.prints.paper.page_layout import Mark, Paper
 
 TITLE_SIZES_PT = (16.0, 13.0, 11.0)
 VALUE_PT = 10.0

@@ -9,10 +9,10 @@ import numpy as np
 
 from navcore.charts.paper import SIZES_MM
 from navcore.prints.caution import CAUTION
-from navcore.prints.drawing import MILLIMETRES_PER_POINT, Drawing, Stroke, Words, words_width_mm
+from navcore.prints.paper.typeset import SMALLEST_PT, fold
 from navcore.prints.plotting_sheet import NO_DANGERS
-from navcore.prints.sheet_table import Table
-from navcore.prints.typeset import SMALLEST_PT, fold
+from navcore.prints.sheets.drawing import MILLIMETRES_PER_POINT, Drawing, Stroke, Words, words_width_mm
+from navcore.prints.sheets.table import Table
 from navcore.text.number import format_number
 from navcore.text.position import format_latitude, format_longitude
 

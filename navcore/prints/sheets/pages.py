@@ -5,21 +5,21 @@ from __future__ import annotations
 from dataclasses import replace
 from typing import TYPE_CHECKING
 
-from navcore.prints.fonts import printable
 from navcore.prints.leg_table import make_leg_table
+from navcore.prints.paper.fonts import printable
 from navcore.prints.plotting_sheet import notes_of, revision_words, scale_words, title_of
-from navcore.prints.plotting_sheet_pdf import write_drawings
-from navcore.prints.plotting_sheet_svg import write_svg
-from navcore.prints.sheet_drawing import draw_sheet
-from navcore.prints.sheet_foot import SheetWords
-from navcore.prints.sheet_grid import grid_table
-from navcore.prints.sheet_ruling import PageWords, draw_ruling
+from navcore.prints.sheets.foot import SheetWords
+from navcore.prints.sheets.grid_courses import grid_table
+from navcore.prints.sheets.pdf import write_drawings
+from navcore.prints.sheets.picture import draw_sheet
+from navcore.prints.sheets.ruling import PageWords, draw_ruling
+from navcore.prints.sheets.svg import write_svg
 
 if TYPE_CHECKING:
     from navcore.charts.sheet import Sheet
     from navcore.charts.sheet_set import SheetSet
     from navcore.plan.solve import Solution
-    from navcore.prints.drawing import Drawing
+    from navcore.prints.sheets.drawing import Drawing
 
 
 def write_sheets_pdf(solution: Solution, sheets: SheetSet) -> bytes:

@@ -8,7 +8,7 @@ from navcore.charts.grid import grid_courses, has_grid
 from navcore.charts.lambert import Lambert
 from navcore.charts.stereographic import Stereographic
 from navcore.prints.projection_words import format_convergence
-from navcore.prints.sheet_table import Table
+from navcore.prints.sheets.table import Table
 from navcore.text.direction import format_direction
 
 if TYPE_CHECKING:

@@ -8,15 +8,15 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from navcore.charts.sheet import LETTER_MM
-from navcore.prints.drawing import Area, Drawing, Stroke, Words, words_width_mm
-from navcore.prints.sheet_foot import foot_marks
+from navcore.prints.sheets.drawing import Area, Drawing, Stroke, Words, words_width_mm
+from navcore.prints.sheets.foot import foot_marks
 from navcore.text.position import format_graticule_line
 
 if TYPE_CHECKING:
     from navcore.charts.graticule import FrameEnd, Graticule
     from navcore.charts.lettering import Lettering
     from navcore.charts.sheet import LaidLeg, LaidPoint, Outline, Rose, Sheet
-    from navcore.prints.sheet_foot import SheetWords
+    from navcore.prints.sheets.foot import SheetWords
     from navcore.trigonometry import FloatArray
 
 Mark = Stroke | Area | Words

@@ -9,13 +9,13 @@ from typing import TYPE_CHECKING
 from reportlab import rl_config
 from reportlab.pdfgen.canvas import Canvas
 
-from navcore.prints.fonts import SANS, SANS_BOLD, register_fonts
-from navcore.prints.page_layout import Arrowhead, Frame, Rule, Text
+from navcore.prints.paper.fonts import SANS, SANS_BOLD, register_fonts
+from navcore.prints.paper.page_layout import Arrowhead, Frame, Rule, Text
 
 if TYPE_CHECKING:
     from collections.abc import Iterable, Sequence
 
-    from navcore.prints.page_layout import Mark, Paper
+    from navcore.prints.paper.page_layout import Mark, Paper
 
 
 def write_pages(pages: Iterable[Sequence[Mark]], paper: Paper, title: str) -> bytes:

@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING
 from navcore.prints.caution import CAUTION
 from navcore.prints.leg_table import method_line
 from navcore.prints.plotting_sheet import NO_DANGERS
-from navcore.prints.sheet_grid import grid_legs
+from navcore.prints.sheets.grid_courses import grid_legs
 
 if TYPE_CHECKING:
     from navcore.charts.sheet import Sheet

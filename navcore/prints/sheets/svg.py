@@ -5,10 +5,10 @@ from __future__ import annotations
 from typing import TYPE_CHECKING
 from xml.sax.saxutils import escape
 
-from navcore.prints.drawing import Area, Stroke, Words, words_width_mm
+from navcore.prints.sheets.drawing import Area, Stroke, Words, words_width_mm
 
 if TYPE_CHECKING:
-    from navcore.prints.drawing import Drawing
+    from navcore.prints.sheets.drawing import Drawing
     from navcore.trigonometry import FloatArray
 
 _FACE = "'DejaVu Sans Condensed', 'DejaVu Sans', sans-serif"

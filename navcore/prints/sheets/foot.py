@@ -9,8 +9,8 @@ from typing import TYPE_CHECKING
 import numpy as np
 
 from navcore.constants import METRES_PER_NAUTICAL_MILE
-from navcore.prints.drawing import MILLIMETRES_PER_POINT, Area, Stroke, Words, words_width_mm
-from navcore.prints.typeset import SMALLEST_PT, fold, fold_at_most
+from navcore.prints.paper.typeset import SMALLEST_PT, fold, fold_at_most
+from navcore.prints.sheets.drawing import MILLIMETRES_PER_POINT, Area, Stroke, Words, words_width_mm
 
 if TYPE_CHECKING:
     from navcore.charts.sheet import Sheet

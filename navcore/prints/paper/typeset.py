@@ -6,7 +6,7 @@ import unicodedata
 from itertools import pairwise
 from typing import TYPE_CHECKING
 
-from navcore.prints.fonts import width_pt
+from navcore.prints.paper.fonts import width_pt
 
 if TYPE_CHECKING:
     from collections.abc import Iterator

@@ -1,0 +1,1 @@
+"""Plotting sheets on paper and in files: their drawing, their tables, and each medium."""
