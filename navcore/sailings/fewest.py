@@ -67,10 +67,10 @@ class _Search:
         joints = [begin_rad]
         guess, made_before = 0.05, 0.0
         while joints[-1] != end_rad:
-            if len(joints) > MOST_PARTS:
-                raise NoAnswerError(f"the leg would be more than {MOST_PARTS} parts; let them lie farther apart")
             joints.append(self.reach_rad(joints[-1], end_rad, guess))
             made = abs(joints[-1] - joints[-2])
+            if joints[-1] != end_rad and (len(joints) > MOST_PARTS or made <= _NOTHING_RAD):
+                raise NoAnswerError(f"the leg would be more than {MOST_PARTS} parts; let them lie farther apart")
             # Parts grow or shrink steadily along a great circle.
             guess = made * min(max(made / made_before, 0.5), 2.0) if made_before else made
             made_before = made

@@ -231,7 +231,9 @@ def test_where_both_lines_are_one_a_distance_asks_for_a_single_part(start: Posit
     assert parts.added_m == pytest.approx(0.0, abs=1e-5)
 
 
-@pytest.mark.parametrize("rule", ["0.001 NM", "0.001° longitude", "0.000001 NM apart"])
+@pytest.mark.parametrize(
+    "rule", ["0.001 NM", "0.001° longitude", "0.000001 NM apart", f"0.{300 * '0'}1 NM apart", f"0.{300 * '0'}1 NM"]
+)
 def test_a_split_into_more_parts_than_anyone_steers_is_refused(rule: str) -> None:
     with pytest.raises(NoAnswerError, match="more than 1000 parts"):
         split_great_circle(SALAL, KUROMATSU, WGS_84, parse_parts(rule))
