@@ -165,10 +165,9 @@ def _lambert(
     try:
         return Lambert(figure, lon_deg, parallels[:1] if len(parallels) == 1 else (parallels[0], parallels[-1]), origin)
     except RangeError as error:
-        if true_scale_deg:
-            raise
+        what = "these parallels" if true_scale_deg else f"latitudes {low:.1f}° to {high:.1f}°"
         raise NoAnswerError(
-            f"no Lambert cone fits latitudes {low:.1f}° to {high:.1f}°: {error}; type --projection mercator or "
+            f"no Lambert cone fits {what}, which balance across the equator; type --projection mercator or "
             "stereographic"
         ) from error
 

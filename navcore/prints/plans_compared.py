@@ -14,7 +14,7 @@ from navcore.prints.tracks import NO_VALUE
 from navcore.text.clock import format_duration, format_instant
 from navcore.text.distance import format_distance, format_distance_figure, format_percent_figure
 from navcore.text.number import format_number
-from navcore.text.plain import fit, pad, visible
+from navcore.text.plain import ELLIPSIS, cell_width, fit, pad, visible
 from navcore.text.position import format_latitude
 from navcore.text.wrap import wrap
 
@@ -95,7 +95,7 @@ def plans_text(plans: Sequence[tuple[str, PlanCompared]]) -> str:
 
 def _side_by_side(plans: Sequence[tuple[str, PlanCompared]]) -> Iterator[str]:
     compared = [plan for _, plan in plans]
-    yield _row("plan", [visible(path) for path, _ in plans])
+    yield _row("plan", [_end_of(visible(path)) for path, _ in plans])
     yield _row("title", [visible(plan.plan.title) for plan in compared])
     yield _row("figure of the Earth", [plan.plan.figure.name for plan in compared])
     yield _row("distance sailed", [_distance(plan.sailed.distance_m) for plan in compared])
@@ -111,6 +111,14 @@ def _side_by_side(plans: Sequence[tuple[str, PlanCompared]]) -> Iterator[str]:
     yield _row("  in hours", [_hours(plan.saving_hours) for plan in compared])
     yield _row("lines farthest apart", [_distance(plan.greatest_separation_m) for plan in compared])
     yield _row("sphere less WGS 84", [_distance(plan.sphere_less_wgs_84_m) for plan in compared])
+
+
+def _end_of(path: str) -> str:
+    """Return the end of a path, which tells files apart, as much as has room."""
+    shown = path
+    while cell_width(shown) > _PLAN_CELLS - 2:
+        shown = ELLIPSIS + shown.removeprefix(ELLIPSIS)[1:]
+    return shown
 
 
 def _legs(compared: PlanCompared) -> Iterator[str]:

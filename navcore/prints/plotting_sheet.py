@@ -14,6 +14,7 @@ from navcore.charts.sheet import ChartPoint
 from navcore.charts.sheet_set import SheetRequest, make_sheets
 from navcore.charts.stereographic import Stereographic
 from navcore.charts.track import TrackLeg
+from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.plan.arcs import arcs_of
 from navcore.plan.model import Line, Trade
 from navcore.plan.revision import fingerprint
@@ -135,7 +136,7 @@ def _leg_words(leg: SailedLeg) -> str:
     course = format_direction(leg.course_deg)
     if leg.line is not Line.RHUMB and leg.end_course_deg is not None:
         course += f" → {format_direction(leg.end_course_deg)}"
-    return f"{_NAMES[leg.line]} {course} {format_distance(leg.distance_m / 1852.0)}"
+    return f"{_NAMES[leg.line]} {course} {format_distance(leg.distance_m / METRES_PER_NAUTICAL_MILE)}"
 
 
 def title_of(solution: Solution) -> str:

@@ -90,10 +90,18 @@ def reckoning_text(reckoning: Reckoning) -> str:
         ("rhumb line", f"{_or_dash(reckoning.rhumb_line_to)}   on {name}"),
         ("great circle", f"{format_position(reckoning.great_circle_to)}   on {name}, each course the initial one"),
         ("middle latitude", f"{_or_dash(tables.middle_latitude_to)}   1' of latitude = 1 NM"),
-        ("Mercator", f"{_or_dash(tables.mercator_to)}   1' of latitude = 1 NM, meridional parts of {name}"),
+        _by_mercator(reckoning),
         ("made good", f"{course} {format_distance(tables.made_good_distance_nmi)}   by plane sailing"),
     )
     return "".join(f"{label:<{_LABEL_CELLS}}{value}\n" for label, value in rows)
+
+
+def _by_mercator(reckoning: Reckoning) -> tuple[str, str]:
+    tables = reckoning.tables
+    if tables.is_parallel:
+        return "parallel", f"{_or_dash(tables.mercator_to)}   1' of arc = 1 NM, departure ÷ cosine of the latitude"
+    basis = f"1' of latitude = 1 NM, meridional parts of {reckoning.figure.name}"
+    return "Mercator", f"{_or_dash(tables.mercator_to)}   {basis}"
 
 
 def _or_null(position: Position | None) -> dict[str, float] | None:

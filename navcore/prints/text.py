@@ -104,7 +104,7 @@ def _headings(slots: dict[Row, list[_Slot]], indent: str) -> Iterator[str]:
 def _row(row: TableRow, slots: Sequence[_Slot], indent: str, width: int) -> Iterator[str]:
     before = indent if row.row is Row.LEG else ""
     wrapped = [wrap(row.cells[slot.index], slot.cells) or [""] for slot in slots]
-    for line in range(max(map(len, wrapped))):
+    for line in range(max(map(len, wrapped), default=0)):
         parts = (lines[line] if line < len(lines) else "" for lines in wrapped)
         yield before + _GAP.join(pad(part, slot.cells, _side(slot)) for part, slot in zip(parts, slots, strict=True))
     beneath = indent + _GAP if row.row is Row.LEG else indent

@@ -3,9 +3,10 @@
 from __future__ import annotations
 
 from dataclasses import dataclass
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NamedTuple
 
 from navcore.constants import METRES_PER_NAUTICAL_MILE
+from navcore.errors import NoAnswerError
 from navcore.prints.tracks import position_json
 from navcore.text.direction import format_direction
 from navcore.text.distance import format_distance
@@ -18,7 +19,26 @@ if TYPE_CHECKING:
     from navcore.prints.tracks import Json
     from navcore.sailings.track import OffTrack, PointOnTrack, Track
 
-_SIDES = {1: "to starboard", -1: "to port", 0: "on it, or straight ahead or astern of an end"}
+_SIDES = {1: "to starboard", -1: "to port"}
+_ON_IT_M = 0.05 * METRES_PER_NAUTICAL_MILE
+
+
+_ALONG = "the line runs along it"
+_NOT_CROSSED = "the line does not cross it"
+
+
+class Answer(NamedTuple):
+    """What was asked of a line, and the points that answer it.
+
+    Attributes:
+        question: In words.
+        points: In order; none where there is none.
+        why_none: Then the reason.
+    """
+
+    question: str
+    points: tuple[PointOnTrack, ...]
+    why_none: str = ""
 
 
 @dataclass(frozen=True, slots=True)
@@ -44,29 +64,39 @@ class PointsAsked:
         """Whether anything is asked."""
         return self != PointsAsked()
 
-    def points_of(self, track: Track) -> Iterator[tuple[str, tuple[PointOnTrack, ...]]]:
-        """Yield what each question is and the points that answer it.
+    def answers_of(self, track: Track) -> Iterator[Answer]:
+        """Yield the answer to each question in turn.
 
         Raises:
-            RangeError: A distance is outside the track.
+            NoAnswerError: There would be too many points.
         """
         for distance_m in self.distances_m:
-            yield f"{format_distance(distance_m / METRES_PER_NAUTICAL_MILE)} along", (track.at(distance_m),)
+            question = f"{format_distance(distance_m / METRES_PER_NAUTICAL_MILE)} along"
+            try:
+                yield Answer(question, (track.at(distance_m),))
+            except NoAnswerError as error:
+                yield Answer(question, (), str(error))
         for lon_deg in self.meridians_deg:
-            yield f"meridian {format_longitude(lon_deg)}", track.crossings_of_meridian(lon_deg)
+            points = track.crossings_of_meridian(lon_deg)
+            along = track.runs_along_meridian(lon_deg)
+            yield Answer(f"meridian {format_longitude(lon_deg)}", points, _ALONG if along else _NOT_CROSSED)
         for lat_deg in self.parallels_deg:
-            yield f"parallel {format_latitude(lat_deg)}", track.crossings_of_parallel(lat_deg)
+            points = track.crossings_of_parallel(lat_deg)
+            along = track.runs_along_parallel(lat_deg)
+            yield Answer(f"parallel {format_latitude(lat_deg)}", points, _ALONG if along else _NOT_CROSSED)
         if self.every_deg is not None:
-            yield f"every {self.every_deg:g}° of longitude", track.at_meridians(self.every_deg)
+            yield Answer(
+                f"every {self.every_deg:g}° of longitude", track.at_meridians(self.every_deg), "none is crossed"
+            )
 
 
 def track_points_text(tracks: Mapping[str, Track], asked: PointsAsked) -> Iterator[str]:
     """Yield the answers line by line, track by track."""
     for name, track in tracks.items():
         yield name
-        for question, points in asked.points_of(track):
-            yield f"  {question}" + ("" if points else ": not on the leg")
-            for point in points:
+        for answer in asked.answers_of(track):
+            yield f"  {answer.question}" + ("" if answer.points else f": {answer.why_none}")
+            for point in answer.points:
                 course, distance = format_direction(point.course_deg), _nmi(point.distance_m)
                 yield f"    {format_position(point.position)}  {course}  after {distance}"
         for position in asked.beside:
@@ -75,14 +105,17 @@ def track_points_text(tracks: Mapping[str, Track], asked: PointsAsked) -> Iterat
 
 def track_points_json(tracks: Mapping[str, Track], asked: PointsAsked) -> list[Json]:
     """Return the answers in full precision, a record for each track."""
-    return [
-        {
-            "line": name,
-            "points": [_point_json(question, point) for question, points in asked.points_of(track) for point in points],
-            "beside": [_off_json(position, track.offset_of(position)) for position in asked.beside],
-        }
-        for name, track in tracks.items()
-    ]
+    return [_track_json(name, track, asked) for name, track in tracks.items()]
+
+
+def _track_json(name: str, track: Track, asked: PointsAsked) -> dict[str, Json]:
+    answers = list(asked.answers_of(track))
+    return {
+        "line": name,
+        "points": [_point_json(answer.question, point) for answer in answers for point in answer.points],
+        "none": [{"asked": answer.question, "why": answer.why_none} for answer in answers if not answer.points],
+        "beside": [_off_json(position, track.offset_of(position)) for position in asked.beside],
+    }
 
 
 def _point_json(question: str, point: PointOnTrack) -> dict[str, Json]:
@@ -104,7 +137,8 @@ def _off_json(position: Position, off: OffTrack) -> dict[str, Json]:
 
 
 def _off_words(off: OffTrack) -> str:
-    return f"{_nmi(off.distance_m)} off, {_SIDES[off.side]}, {_nmi(off.along_m)} along"
+    side = _SIDES.get(off.side, "on it" if off.distance_m < _ON_IT_M else "straight ahead or astern of an end")
+    return f"{_nmi(off.distance_m)} off, {side}, {_nmi(off.along_m)} along"
 
 
 def _nmi(distance_m: float) -> str:

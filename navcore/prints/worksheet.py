@@ -120,14 +120,14 @@ def _leg_sheet(solution: Solution, index: int) -> LegSheet:
     start, end = (waypoint.position for waypoint in plan.waypoints[index : index + 2])
     compared = compare_lines(start, end, plan.figure)
     checked = [check_rhumb_line(compared), check_great_circle(compared)]
-    by_composite = None if leg.composite is None else check_composite(leg.composite)
-    if by_composite is not None:
-        checked.append(by_composite)
+    if leg.composite is not None:
+        checked.append(check_composite(leg.composite))
     steps = given_positions(start, end)
     if leg.composite is not None:
         steps = (*steps, Step("limit", "given", leg.composite.limit_deg, StepKind.LATITUDE))
     given = Section("Given", tuple(map(_line, steps)))
     workings = [_section(working, compared) for line in checked for working in line.workings]
+    workings += [Section(f"{line.name.capitalize()}: no working", (), (line.note,)) for line in checked if line.note]
     return LegSheet(
         index=index,
         heading=f"Leg {index + 1} → {index + 2}: {visible(leg_name(plan, index))}",

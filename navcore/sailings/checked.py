@@ -6,9 +6,15 @@ import math
 from dataclasses import dataclass
 from typing import TYPE_CHECKING
 
-from navcore.earth.latitudes import parallel_radius_m
+import numpy as np
+
+from navcore.constants import METRES_PER_NAUTICAL_MILE
+from navcore.earth.figure import SPHERE
+from navcore.earth.latitudes import meridian_distance_m, parallel_radius_m
 from navcore.errors import NoAnswerError
+from navcore.lines import great_circle
 from navcore.sailings import great_circle_sphere, mercator, middle_latitude, parallel
+from navcore.sailings.composite import composite
 from navcore.sailings.composite_working import solve_composite
 from navcore.sailings.differences import difference_of_latitude_min, is_across_equator, is_at_pole
 from navcore.text.number import format_number
@@ -23,6 +29,10 @@ if TYPE_CHECKING:
 SMALL_D_LAT_MIN = 60.0
 """Below this difference of latitude middle-latitude sailing comes first, as DMP is then a small difference of large
 figures. Common practice."""
+
+_ROUNDING = "rounding only"
+_UNKNOWN = "not accounted for: look for the mistake"
+_SHOWS_NMI = 0.05
 
 
 @dataclass(frozen=True, slots=True)
@@ -55,6 +65,7 @@ class CheckedLine:
         final_course_deg: Where it ends.
         workings: First the usual method, then a second, independent one.
         rows: One for each working.
+        note: Why there is no working; "" where there is one.
     """
 
     name: str
@@ -63,6 +74,7 @@ class CheckedLine:
     final_course_deg: float
     workings: tuple[Working, ...]
     rows: tuple[CheckRow, ...]
+    note: str = ""
 
 
 def check_rhumb_line(leg: LegComparison) -> CheckedLine:
@@ -80,21 +92,31 @@ def check_great_circle(leg: LegComparison) -> CheckedLine:
         for solve in (great_circle_sphere.solve_by_cosines, great_circle_sphere.solve_by_haversines)
     )
     line = leg.great_circle
-    rows = tuple(_sphere_row(working, line.distance_nmi, leg.figure) for working in workings)
+    sphere_m = float(great_circle.inverse(*leg.start, *leg.end, SPHERE).distance_m)
+    rows = tuple(_sphere_row(working, line.distance_nmi, sphere_m, leg.figure) for working in workings)
     return CheckedLine(
         "great circle", line.distance_nmi, line.initial_course_deg, line.final_course_deg, workings, rows
     )
 
 
-def check_composite(track: Composite) -> CheckedLine | None:
-    """Return a composite worked by the formulas of the books; None where it is the great circle."""
-    try:
-        working = solve_composite(track.start, track.end, track.limit_deg)
-    except NoAnswerError:
-        return None
-    distance_nmi = track.distance_m / 1852.0
-    rows = (_sphere_row(working, distance_nmi, track.figure),)
-    return CheckedLine("composite", distance_nmi, track.initial_course_deg, track.final_course_deg, (working,), rows)
+def check_composite(track: Composite) -> CheckedLine:
+    """Return a composite worked by the formulas of the books; where they give none, with the reason in its place."""
+    note = track.note or ""
+    workings: tuple[Working, ...] = ()
+    rows: tuple[CheckRow, ...] = ()
+    distance_nmi = track.distance_m / METRES_PER_NAUTICAL_MILE
+    if not track.is_great_circle:
+        try:
+            working = solve_composite(track.start, track.end, track.limit_deg)
+        except NoAnswerError as error:
+            note = f"On the sphere there is none to check it by: {error}"
+        else:
+            sphere_m = composite(track.start, track.end, track.limit_deg, SPHERE).distance_m
+            workings = (working,)
+            rows = (_sphere_row(working, distance_nmi, sphere_m, track.figure),)
+    return CheckedLine(
+        "composite", distance_nmi, track.initial_course_deg, track.final_course_deg, workings, rows, note
+    )
 
 
 def _rhumb_workings(start: Position, end: Position, figure: Figure) -> tuple[Working, ...]:
@@ -119,15 +141,13 @@ def _rhumb_row(leg: LegComparison, working: Working) -> CheckRow:
     accounted_nmi = 0.0
     if leg.figure.flattening:
         mile_m, words = _mile_m(leg, working)
-        accounted_nmi = distance_nmi * (1.0 - mile_m / 1852.0)
+        accounted_nmi = distance_nmi * (1.0 - mile_m / METRES_PER_NAUTICAL_MILE)
         causes.append(
             f"{words} {format_number(mile_m, 1)} m on {leg.figure.name}, not 1852 m: {_signed(accounted_nmi)}"
         )
-    rest_nmi = difference_nmi - accounted_nmi
-    if abs(rest_nmi) >= 0.05:
-        cause = "the mean latitude stands for the true middle one" if "Middle" in working.method else "rounding"
-        causes.append(f"{cause}: {_signed(rest_nmi)}")
-    return CheckRow(working.method, distance_nmi, course_deg, difference_nmi, tuple(causes) or ("rounding only",))
+    rest = "the mean latitude stands for the true middle one" if working.method == middle_latitude.METHOD else _UNKNOWN
+    causes += _rest(difference_nmi - accounted_nmi, rest)
+    return CheckRow(working.method, distance_nmi, course_deg, difference_nmi, tuple(causes) or (_ROUNDING,))
 
 
 def _mile_m(leg: LegComparison, working: Working) -> tuple[float, str]:
@@ -138,21 +158,29 @@ def _mile_m(leg: LegComparison, working: Working) -> tuple[float, str]:
         d_long_rad = math.radians(working.number("d.long") / 60.0)
         along_m = abs(d_long_rad) * float(parallel_radius_m(leg.start.lat_deg, leg.figure))
         return along_m / abs(departure_nmi), "1 NM of departure is"
-    run_m = leg.rhumb_line.distance_nmi * 1852.0
-    by_mercator = mercator.solve_inverse(leg.start, leg.end, leg.figure).value("distance")
-    return run_m / by_mercator if by_mercator else run_m / abs(d_lat_min), "1' of latitude is on average"
+    arc_m = np.diff(meridian_distance_m([leg.start.lat_deg, leg.end.lat_deg], leg.figure))
+    return abs(float(arc_m[0]) / d_lat_min), "1' of latitude is on average"
 
 
-def _sphere_row(working: Working, line_nmi: float, figure: Figure) -> CheckRow:
+def _sphere_row(working: Working, line_nmi: float, sphere_m: float, figure: Figure) -> CheckRow:
+    """Return a working on the sphere beside the line, the sphere's part found from the line worked on the sphere."""
     distance_nmi, course_deg = working.value("distance"), working.value("initial course")
-    difference_nmi = None if distance_nmi is None else distance_nmi - line_nmi
-    cause = "rounding only"
-    if figure.flattening and difference_nmi is not None:
-        cause = f"the sphere in place of {figure.name}: {_signed(difference_nmi)}"
-    return CheckRow(working.method, distance_nmi, course_deg, difference_nmi, (cause,))
+    if distance_nmi is None:
+        return CheckRow(working.method, None, course_deg, None, (_ROUNDING,))
+    sphere_nmi = sphere_m / METRES_PER_NAUTICAL_MILE
+    causes = []
+    if figure.flattening:
+        causes.append(f"the sphere in place of {figure.name}: {_signed(sphere_nmi - line_nmi)}")
+    causes += _rest(distance_nmi - (sphere_nmi if figure.flattening else line_nmi), _UNKNOWN)
+    return CheckRow(working.method, distance_nmi, course_deg, distance_nmi - line_nmi, tuple(causes) or (_ROUNDING,))
+
+
+def _rest(rest_nmi: float, cause: str) -> list[str]:
+    """Return what is left of a difference and its cause, where it shows in the figures as printed."""
+    return [f"{cause}: {_signed(rest_nmi)}"] if abs(rest_nmi) >= _SHOWS_NMI else []
 
 
 def _signed(distance_nmi: float) -> str:
     figure = format_number(abs(distance_nmi), 1)
-    sign = "" if figure == "0.0" else "−" if distance_nmi < 0.0 else "+"
+    sign = "" if figure == "0.0" else "-" if distance_nmi < 0.0 else "+"
     return f"{sign}{figure} NM"

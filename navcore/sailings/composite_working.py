@@ -5,7 +5,7 @@ from __future__ import annotations
 import math
 from typing import TYPE_CHECKING
 
-from navcore.angles import wrap_180
+from navcore.angles import wrap_180, wrap_360
 from navcore.earth.figure import SPHERE
 from navcore.errors import NoAnswerError
 from navcore.sailings.composite import composite
@@ -41,6 +41,7 @@ def solve_composite(start: Position, end: Position, limit_deg: float) -> Working
     along_min = abs(d_long_min) - (turn1_deg + turn2_deg) * 60.0
     along_nmi = along_min * sine_cosine(limit_deg)[1]
     onward = math.copysign(1.0, d_long_min)
+    initial_deg, final_deg = (_course_deg(angle, side, onward) for angle in (angle1_deg, 180.0 - angle2_deg))
     given = (*given_positions(start, end), Step("limit", "given", limit_deg, StepKind.LATITUDE))
     steps = (
         Step("d.long", "long 2 − long 1 by the short way", d_long_min, StepKind.EAST_MIN),
@@ -52,18 +53,24 @@ def solve_composite(start: Position, end: Position, limit_deg: float) -> Working
         Step("D2", "cos D2 = sin lat 2 ÷ sin limit, in minutes", run2_deg * 60.0, StepKind.DISTANCE_NMI),
         Step("d.long t", "d.long − P1 − P2, in minutes", onward * along_min, StepKind.EAST_MIN),
         Step("Dp", "d.long t × cos limit", along_nmi, StepKind.DISTANCE_NMI),
-        Step("distance", "D1 + Dp + D2", track.distance_m / 1852.0, StepKind.DISTANCE_NMI),
+        Step("distance", "D1 + Dp + D2", (run1_deg + run2_deg) * 60.0 + along_nmi, StepKind.DISTANCE_NMI),
         Step("A", "sin A = cos limit ÷ cos lat 1", angle1_deg, StepKind.ANGLE),
         Step(
             "initial course",
             "A, from the limit's pole towards E or W as d.long",
-            track.initial_course_deg,
+            initial_deg,
             StepKind.COURSE,
         ),
         Step("B", "sin B = cos limit ÷ cos lat 2", angle2_deg, StepKind.ANGLE),
-        Step("final course", "180° − B, likewise", track.final_course_deg, StepKind.COURSE),
+        Step("final course", "180° − B, likewise", final_deg, StepKind.COURSE),
     )
     return Working(METHOD, BASIS, given, steps, RESULTS, (WHY_THE_PARALLEL,))
+
+
+def _course_deg(angle_deg: float, side: float, onward: float) -> float:
+    """Return the course at an angle from the limit's pole, 1 for the north one, towards the east (1) or west (-1)."""
+    from_north_deg = angle_deg if side > 0.0 else 180.0 - angle_deg
+    return float(wrap_360(onward * from_north_deg))
 
 
 def _from_end(lat_deg: float, limit_deg: float) -> tuple[float, float, float]:

@@ -76,8 +76,8 @@ def solve_direct(start: Position, course_deg: float, distance_nmi: float) -> Wor
     lat2_deg = latitude_reached_deg(start, d_lat_min)
     _refuse_across_equator(start.lat_deg, lat2_deg)
     mean_deg = mean_latitude_deg(start.lat_deg, lat2_deg)
-    if is_at_pole(mean_deg) and departure_nmi:
-        raise NoAnswerError("a pole has no parallel to sail along; start from another latitude")
+    if departure_nmi and (is_at_pole(start.lat_deg) or is_at_pole(lat2_deg)):
+        raise NoAnswerError("a pole is reached or left along a meridian only; use course 000 or 180")
     cosine = sine_cosine(mean_deg)[1]
     d_long_min = departure_nmi / cosine if departure_nmi else 0.0
     steps = (

@@ -91,12 +91,16 @@ def shown_as_typed(distance: str, course: str) -> Shown:
     )
 
 
+_MOST_DECIMALS = 12
+"""Digits beyond these say nothing of what another system works with."""
+
+
 def _half_a_digit(text: str, value: float) -> float:
     """Return half of the last digit as typed, in the unit that the value was read into."""
     figures = _FIGURES.search(text)
     if figures is None:
         return 0.5
-    half = 0.5 * 10.0 ** -len(figures[2] or "")
+    half = 0.5 * 10.0 ** -min(len(figures[2] or ""), _MOST_DECIMALS)
     typed = float(figures[0])
     return half * value / typed if typed and value else half
 
@@ -326,7 +330,11 @@ def _slip_causes(start: Position, end: Position, figure: Figure) -> list[_Cause]
         ):
             causes += [
                 _Cause(
-                    Kind.SLIP, f"{slip.words}; {line} on {of.name}", slip.cost + more, distance_m / 1852.0, course_deg
+                    Kind.SLIP,
+                    f"{slip.words}; {line} on {of.name}",
+                    slip.cost + more,
+                    distance_m / METRES_PER_NAUTICAL_MILE,
+                    course_deg,
                 )
                 for slip, distance_m, course_deg in zip(slips, distances_m.tolist(), courses_deg.tolist(), strict=True)
             ]

@@ -12,13 +12,14 @@ from typing import TYPE_CHECKING
 
 import numpy as np
 
+from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.lines.offset import greatest_separation_m
 
 if TYPE_CHECKING:
     from navcore.lines.great_circle_path import GreatCirclePath
     from navcore.trigonometry import FloatArray
 
-QUICK_M = 20.0 * 1852.0
+QUICK_M = 20.0 * METRES_PER_NAUTICAL_MILE
 _NODES = 14
 _GRID = 200
 

@@ -100,8 +100,11 @@ def split_great_circle(start: Position, end: Position, figure: Figure, rule: Par
     """Split the great circle between two places; one over a pole has a joint there whatever the rule.
 
     Raises:
-        NoAnswerError: The rule asks for more than MOST_PARTS parts, or for fewer than the line has arcs.
+        NoAnswerError: The rule asks for more than MOST_PARTS parts, or for fewer than the line has arcs; or the leg has
+            no length.
     """
+    if start == end:
+        raise NoAnswerError("the leg has no length, so that there is nothing to split")
     return _split(_great_circle_arcs(start, end, figure), rule)
 
 
@@ -183,9 +186,9 @@ def _meridians_m(arc: _Arc, amount_deg: float) -> list[float]:
     if arc.path is not None and (arc.path.sin_node == 0.0 or abs(arc.start.lat_deg) == 90.0):
         return []
     low_deg, high_deg = sorted((arc.start.lon_deg, arc.start.lon_deg + d_long_deg))
-    first, last = math.ceil(low_deg / amount_deg), math.floor(high_deg / amount_deg)
-    if last - first > MOST_PARTS:
+    if high_deg - low_deg > MOST_PARTS * amount_deg:
         raise NoAnswerError(f"the leg would be more than {MOST_PARTS} parts; split it less finely")
+    first, last = math.ceil(low_deg / amount_deg), math.floor(high_deg / amount_deg)
     meridians_deg = np.arange(first, last + 1) * amount_deg
     if arc.path is None:
         along_m = (meridians_deg - arc.start.lon_deg) / d_long_deg * arc.length_m

@@ -68,7 +68,8 @@ class TraverseTables:
         made_good_course_deg: Plane sailing's, [0, 360); None where the runs end where they began.
         made_good_distance_nmi: Plane sailing's.
         middle_latitude_to: Where it ends; None across the equator and past a pole.
-        mercator_to: Where it ends; None past a pole, and at one on another course than the meridian's.
+        mercator_to: Where it ends, by parallel sailing on 090 and 270; None past a pole, and at one on another course
+            than the meridian's.
     """
 
     d_lat_min: float
@@ -77,6 +78,11 @@ class TraverseTables:
     made_good_distance_nmi: float
     middle_latitude_to: Position | None
     mercator_to: Position | None
+
+    @property
+    def is_parallel(self) -> bool:
+        """Whether parallel sailing took Mercator sailing's place."""
+        return self.made_good_course_deg is not None and not self.d_lat_min
 
 
 def tables_of_leg(start: Position, end: Position, figure: Figure) -> LegTables:

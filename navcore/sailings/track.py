@@ -9,17 +9,21 @@ from typing import TYPE_CHECKING, NamedTuple
 
 import numpy as np
 
-from navcore.angles import difference_of_longitude
+from navcore.angles import difference_of_longitude, wrap_180
+from navcore.constants import METRES_PER_NAUTICAL_MILE
 from navcore.errors import NoAnswerError
 from navcore.lines import great_circle, rhumb_line
 from navcore.lines.offset import distance_from_great_circle, distance_from_rhumb_line
 from navcore.position import Position
+from navcore.text.distance import format_distance
 
 if TYPE_CHECKING:
     from collections.abc import Iterator
 
     from navcore.earth.figure import Figure
     from navcore.lines.leg import Crossing
+
+MOST_POINTS = 400
 
 _AT_JOINT_M = 1e-3
 
@@ -99,10 +103,10 @@ class Track:
             NoAnswerError: The track is shorter, or the distance is below 0.
         """
         if not 0.0 <= distance_m <= self.length_m:
-            raise NoAnswerError(
-                f"{distance_m / 1852.0:.1f} NM is not on the leg, which is {self.length_m / 1852.0:.1f} NM long; "
-                "give a distance from 0 to that"
+            asked, length = (
+                format_distance(metres / METRES_PER_NAUTICAL_MILE) for metres in (distance_m, self.length_m)
             )
+            raise NoAnswerError(f"{asked} is not on the line, which is {length} long")
         index = max(0, int(np.searchsorted(self.begins_m, distance_m, side="left")) - 1)
         return self._at(index, distance_m - self.begins_m[index])
 
@@ -124,6 +128,11 @@ class Track:
             for piece in self.pieces
         )
 
+    def runs_along_meridian(self, lon_deg: float) -> bool:
+        """Say whether a piece of the track lies on a meridian."""
+        ends = [{wrap_180(place.lon_deg - lon_deg) for place in (piece.start, piece.end)} for piece in self._long]
+        return {0.0} in ends
+
     def crossings_of_parallel(self, lat_deg: float) -> tuple[PointOnTrack, ...]:
         """Return where the track crosses or touches a parallel, ends included, in order; none where it runs along."""
         return self._crossings(
@@ -132,6 +141,19 @@ class Track:
             else rhumb_line.crossing_of_parallel(*piece.start, *piece.end, lat_deg, self.figure)
             for piece in self.pieces
         )
+
+    def runs_along_parallel(self, lat_deg: float) -> bool:
+        """Say whether a piece of the track lies on a parallel; of great circles only one on the equator does."""
+        rhumb_lines = (piece for piece in self._long if not piece.is_great_circle)
+        if any(piece.start.lat_deg == piece.end.lat_deg == lat_deg for piece in rhumb_lines):
+            return True
+        circles = (piece for piece in self._long if piece.is_great_circle)
+        on_equator = (piece for piece in circles if piece.start.lat_deg == piece.end.lat_deg == lat_deg == 0.0)
+        return any(float(great_circle.inverse(*p.start, *p.end, self.figure)[1]) in {90.0, 270.0} for p in on_equator)
+
+    @property
+    def _long(self) -> Iterator[Piece]:
+        return (piece for piece in self.pieces if piece.start != piece.end)
 
     def _crossings(self, found: Iterator[Crossing]) -> tuple[PointOnTrack, ...]:
         points: list[PointOnTrack] = []
@@ -145,11 +167,17 @@ class Track:
         return tuple(points)
 
     def at_meridians(self, step_deg: float) -> tuple[PointOnTrack, ...]:
-        """Return where the track crosses the whole multiples of an amount of longitude, ready to lay off on a chart."""
+        """Return where the track crosses the whole multiples of an amount of longitude, ready to lay off on a chart.
+
+        Raises:
+            NoAnswerError: There would be more than MOST_POINTS.
+        """
         points: list[PointOnTrack] = []
         for piece in self.pieces:
             d_long_deg = difference_of_longitude(piece.start.lon_deg, piece.end.lon_deg)
             low_deg, high_deg = sorted((piece.start.lon_deg, piece.start.lon_deg + d_long_deg))
+            if high_deg - low_deg > MOST_POINTS * step_deg:
+                raise NoAnswerError(f"the leg crosses more than {MOST_POINTS} of them; ask for meridians farther apart")
             for number in range(math.ceil(low_deg / step_deg), math.floor(high_deg / step_deg) + 1):
                 points.extend(self.crossings_of_meridian(number * step_deg))
         points.sort(key=lambda point: point.distance_m)

@@ -33,6 +33,7 @@ if TYPE_CHECKING:
     from collections.abc import Sequence
 
 _ADVICE = f"type latitude, then longitude, such as {EXAMPLE}"
+_EXPONENT = re.compile(r"\d+(?:\.\d*)?[eE][-+]\d+")
 _SIGNED = re.compile(
     r"(?P<lat_sign>[+-]?)(?P<lat>\d+(?:\.\d+)?) ?°?(?P<between> *, *| +)(?P<lon_sign>[+-]?)(?P<lon>\d+(?:\.\d+)?) ?°?",
     re.ASCII,
@@ -52,6 +53,7 @@ def parse_position(text: str) -> Position:
     iso = read_iso_6709(text, typed)
     if iso is not None:
         return iso
+    _refuse_exponents(text, typed)
     tokens = lettered_tokens(text, typed, _ADVICE)
     _refuse_decimal_commas(text, tokens)
     if not any(token.kind == WORD for token in tokens):
@@ -148,7 +150,9 @@ def _icao_part(value_deg: float, axis: Axis) -> str:
 
 def _parse_alone(text: str, axis: Axis) -> float:
     advice = f"type it like {axis.example}"
-    tokens = lettered_tokens(text, plain(text, f"the {axis.name}", advice), advice)
+    typed = plain(text, f"the {axis.name}", advice)
+    _refuse_exponents(text, typed)
+    tokens = lettered_tokens(text, typed, advice)
     _refuse_decimal_commas(text, tokens)
     letters = [token for token in tokens if token.kind == WORD]
     if not letters:
@@ -173,6 +177,13 @@ def _signed_alone(text: str, tokens: Sequence[Token], axis: Axis) -> float:
     shown = f"{bare}{axis.letters[0]} or {bare}{axis.letters[1]}" if bare else axis.example
     end = tokens[-1].end
     raise ParseError(text, (end, end), f"the {axis.name} has no letter, and none is guessed", f"type {shown}")
+
+
+def _refuse_exponents(text: str, typed: str) -> None:
+    """Refuse 1e-07, whose e would be taken for the letter of the east."""
+    if match := _EXPONENT.search(typed):
+        advice = f"type it out: {float(match[0]):.12f}".rstrip("0").rstrip(".")
+        raise ParseError(text, match.span(), "a coordinate is written without an exponent", advice)
 
 
 def _refuse_decimal_commas(text: str, tokens: Sequence[Token]) -> None:
@@ -228,7 +239,9 @@ def _refuse_letterless(text: str, tokens: Sequence[Token]) -> NoReturn:
     advice = _ADVICE
     if numbers and len(numbers) % 2 == 0:
         middle = tokens.index(numbers[len(numbers) // 2])
-        shown = f"{_bare(text, tokens[:middle])}N {_bare(text, tokens[middle:])}E"
+        parts = tokens[:middle], tokens[middle:]
+        letters = ("NS"[parts[0][0].kind == "-"], "EW"[tokens[middle - 1].kind == "-"])
+        shown = " ".join(f"{_bare(text, part)}{letter}" for part, letter in zip(parts, letters, strict=True))
         advice = f"type {shown}, with N or S and E or W as is meant"
         if len(numbers) == 2:
             lat, lon = (_sign_before(tokens, number) + number.text for number in numbers)

@@ -7,14 +7,11 @@ import signal
 import subprocess
 import sys
 import time
-from typing import TYPE_CHECKING
+from pathlib import Path
 
 import pytest
 
 from tests.support import DEMOS, ROOT, legbook
-
-if TYPE_CHECKING:
-    from pathlib import Path
 
 NORTH_PACIFIC = str(ROOT / "routes_demo" / "north_pacific_winter.toml")
 
@@ -279,3 +276,66 @@ def test_a_verb_imports_only_what_it_uses(words: list[str], unused: set[str]) ->
     loaded = set(done.stderr.splitlines()[-1].split("|"))
     assert "numpy" in loaded
     assert unused & loaded == set()
+
+
+@pytest.mark.parametrize("verb", ["table", "worksheet", "sheet"])
+def test_a_print_never_replaces_the_plan_it_is_made_from(verb: str, tmp_path: Path) -> None:
+    plan, link = tmp_path / "plan.toml", tmp_path / "link.txt"
+    plan.write_bytes((ROOT / "routes_demo" / "coastal_run.toml").read_bytes())
+    before = plan.read_bytes()
+    link.symlink_to(plan)
+    for target in (plan, link):
+        done = legbook(verb, str(plan), "-o", str(target))
+        assert done.returncode == 2
+        assert b"is the plan itself" in done.stderr
+    assert plan.read_bytes() == before
+
+
+@pytest.mark.skipif(not Path("/dev/full").exists(), reason="a device that takes nothing")
+@pytest.mark.parametrize("words", [["leg", "50N030W", "46N040W"], ["table", NORTH_PACIFIC], ["distances", "-"]])
+def test_output_that_takes_no_more_is_named_and_is_no_fault_of_the_input(words: list[str]) -> None:
+    with Path("/dev/full").open("wb") as full:
+        command = [sys.executable, "-m", "tui", *words]
+        rows = b"lat1,lon1,lat2,lon2\n" + b"1,2,3,4\n" * 3000
+        done = subprocess.run(command, input=rows, stdout=full, stderr=subprocess.PIPE, check=False, cwd=ROOT)
+    assert done.returncode == 2
+    assert done.stderr.startswith(b"legbook: standard output: ")
+    assert b"Exception ignored" not in done.stderr
+
+
+def test_a_file_that_can_not_be_written_is_wrong_usage(tmp_path: Path) -> None:
+    done = legbook("table", NORTH_PACIFIC, "-o", str(tmp_path / "none" / "x.pdf"))
+    assert done.returncode == 2
+    assert b"nothing was written" in done.stderr
+
+
+def test_words_that_begin_with_a_minus_and_a_digit_are_taken_as_they_are(tmp_path: Path) -> None:
+    command = [sys.executable, "-m", "tui", "table", NORTH_PACIFIC, "-o", "-2.txt"]
+    environment = {**os.environ, "PYTHONPATH": str(ROOT)}
+    subprocess.run(command, check=True, cwd=tmp_path, env=environment, capture_output=True)
+    assert [path.name for path in tmp_path.iterdir()] == ["-2.txt"]
+    assert b"50\xc2\xb000.0'S 030\xc2\xb000.0'W" in legbook("leg", "-50,-30", "-46,-40").stdout
+    assert b"'-10'" in legbook("leg", "50N030W", "46N040W", "--meridians", "-10").stderr
+
+
+@pytest.mark.parametrize("columns", ["only:", "only:eta", "only:name", "only:remarks"])
+def test_columns_that_leave_a_leg_none_are_printed_in_every_medium(columns: str) -> None:
+    for medium in ("text", "csv", "markdown", "pdf"):
+        assert legbook("table", NORTH_PACIFIC, "--as", medium, "--columns", columns).returncode == 0
+
+
+def test_a_word_that_is_neither_verb_nor_file_is_told_the_verbs() -> None:
+    done = legbook("tabel", NORTH_PACIFIC)
+    assert done.returncode == 2
+    assert b"tabel is no verb and no file; verbs: table, leg" in done.stderr
+
+
+def test_reckoning_along_a_parallel_is_called_what_it_is() -> None:
+    words = legbook("reckon", "60N 0E", "90/100").stdout.decode()
+    assert "Mercator" not in words
+    assert "parallel            60\u00b000.0'N 003\u00b020.0'E" in words
+
+
+def test_from_a_pole_no_table_answers_on_a_course_that_is_none() -> None:
+    tables = json.loads(legbook("reckon", "90N 010W", "135/100", "--json").stdout)["tables"]
+    assert tables["middle_latitude_to"] is tables["mercator_to"] is None

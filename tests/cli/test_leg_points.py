@@ -57,4 +57,37 @@ def test_what_cannot_be_asked_is_wrong_usage(words: list[str]) -> None:
 def test_a_point_beyond_the_leg_does_not_exist() -> None:
     done = legbook(*LEG, "--at", "9999 NM")
     assert done.returncode == 1
-    assert b"not on the leg" in done.stderr
+    assert b"beyond the end of every line" in done.stderr
+    assert done.stdout.count(b"9999.0 NM is not on the line, which is") == 2
+
+
+def test_a_point_that_only_one_line_has_is_given_and_the_other_says_its_length() -> None:
+    done = legbook("leg", "50N030W", "46N040W", "--at", "468.7NM")
+    words = done.stdout.decode()
+    assert done.returncode == 0
+    assert "468.7 NM is not on the line, which is 468.5 NM long" in words
+    assert "after 468.7 NM" in words
+
+
+def test_a_line_that_runs_along_what_was_asked_says_so_and_none_is_told_from_that() -> None:
+    words = legbook("leg", "50N030W", "40N030W", "--meridian", "30W", "--meridian", "10W").stdout.decode()
+    assert words.count("meridian 030°00.0'W: the line runs along it") == 2
+    assert words.count("meridian 010°00.0'W: the line does not cross it") == 2
+    asked = json.loads(legbook("leg", "50N030W", "50N010W", "--parallel", "50N", "--json").stdout)["tracks"]
+    assert asked[0]["none"] == [{"asked": "parallel 50°00.0'N", "why": "the line runs along it"}]
+    assert len(asked[1]["points"]) == 2
+    equator = json.loads(legbook("leg", "0N030W", "0N010W", "--parallel", "0N", "--json").stdout)["tracks"]
+    assert [line["none"][0]["why"] for line in equator] == ["the line runs along it"] * 2
+
+
+def test_a_time_along_the_leg_asks_for_a_speed() -> None:
+    done = legbook(*LEG, "--at", "12h")
+    assert done.returncode == 2
+    assert b"give --speed too" in done.stderr
+
+
+@pytest.mark.parametrize("step", ["0.0001", "1e-9", "1e-320"])
+def test_meridians_too_close_to_lay_off_are_refused_at_once(step: str) -> None:
+    done = legbook(*LEG, "--meridians", step)
+    assert done.returncode == 1
+    assert b"farther apart" in done.stderr

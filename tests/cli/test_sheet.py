@@ -9,7 +9,7 @@ from typing import TYPE_CHECKING
 import pytest
 
 from navcore.errors import NoAnswerError, ParseError
-from tests.support import ROOT
+from tests.support import ROOT, legbook
 from tui.cli.exit_codes import ExitCode
 from tui.cli.sheet import VERB
 
@@ -87,3 +87,29 @@ def test_what_can_not_be_drawn_or_read_is_said() -> None:
     for scale in ("big", "0", "-5", "1:"):
         with pytest.raises(ParseError, match="2500000"):
             run(NORTH_PACIFIC, f"--scale={scale}")
+
+
+@pytest.mark.parametrize(
+    ("words", "said"),
+    [
+        (("--true-scale", "40N,50N"), "a mercator sheet takes one latitude of true scale; type --true-scale 40N"),
+        (("--projection", "lambert", "--true-scale", "40N,45N,50N"), "takes two latitudes of true scale"),
+        (
+            ("--projection", "gnomonic", "--true-scale", "40N"),
+            "takes no latitude of true scale; leave --true-scale out",
+        ),
+        (("--true-scale", "90N"), "a mercator sheet has no scale at a pole"),
+        (("--margin", "-5"), "this is no margin; type 0 to 40 for --margin"),
+    ],
+)
+def test_what_a_projection_does_not_take_is_refused_not_ignored(words: tuple[str, ...], said: str) -> None:
+    done = legbook("sheet", NORTH_PACIFIC, *words, "--as", "json")
+    assert done.returncode == 2
+    assert said in done.stderr.decode()
+    assert not done.stdout
+
+
+def test_parallels_without_a_cone_are_refused_in_words() -> None:
+    done = legbook("sheet", NORTH_PACIFIC, "--projection", "lambert", "--true-scale", "40N,40S", "--as", "json")
+    assert done.returncode == 1
+    assert b"no Lambert cone fits these parallels" in done.stderr

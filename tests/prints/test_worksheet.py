@@ -5,9 +5,11 @@ from __future__ import annotations
 import json
 import math
 import re
-from typing import TYPE_CHECKING
+from dataclasses import replace
+from typing import TYPE_CHECKING, Any
 
 import pytest
+from geographiclib.geodesic import Geodesic
 
 from navcore.earth.figure import FIGURES
 from navcore.errors import NoAnswerError
@@ -18,7 +20,9 @@ from navcore.position import Position
 from navcore.prints.worksheet import BY_TANGENT, LegSheet, make_worksheet
 from navcore.prints.worksheet_media import WIDTH, worksheet_json, worksheet_text
 from navcore.prints.worksheet_pdf import worksheet_pdf
+from navcore.sailings import checked
 from navcore.sailings.parts import parse_parts
+from navcore.sailings.working import Working
 from navcore.text.plain import cell_width
 from tests.support import DEMOS
 
@@ -190,6 +194,44 @@ def test_every_difference_from_the_plan_is_accounted_for(name: str, figure: str)
                 if ": " in cause
             ]
             assert sum(named) == pytest.approx(row.difference_nmi, abs=0.11)
+
+
+def test_the_sphere_s_part_is_found_from_the_line_on_the_sphere_and_on_the_figure() -> None:
+    """By geographiclib on WGS 84, and the haversine on the sphere."""
+    (lat1, lon1), (lat2, lon2) = LEGS["ocean"]
+    true_nmi = Geodesic.WGS84.Inverse(lat1, lon1, lat2, lon2)["s12"] / 1852.0
+    squared = sin((lat2 - lat1) / 2.0) ** 2 + cos(lat1) * cos(lat2) * sin((lon2 - lon1) / 2.0) ** 2
+    part_nmi = 120.0 * math.degrees(math.asin(math.sqrt(squared))) - true_nmi
+    causes = [row.causes for row in sheet_of("ocean").checked[1].rows]
+    assert causes == [(f"the sphere in place of WGS 84: {part_nmi:+.1f} NM",)] * 2
+
+
+def test_a_wrong_working_is_not_explained_away(monkeypatch: pytest.MonkeyPatch) -> None:
+    for name in ("_sphere_row", "_rhumb_row"):
+        row = getattr(checked, name)
+
+        def wrong(*words: Any, row: Any = row) -> Any:
+            words = tuple(_longer(word) if isinstance(word, Working) else word for word in words)
+            return row(*words)
+
+        monkeypatch.setattr(checked, name, wrong)
+    for line in sheet_of("ocean").checked:
+        assert any("not accounted for" in cause and "+7.0 NM" in cause for cause in line.rows[0].causes)
+
+
+def _longer(working: Working) -> Working:
+    """Return a working with 7 NM too much."""
+    steps = tuple(
+        replace(step, value=(step.value or 0.0) + 7.0) if step.symbol == "distance" else step for step in working.steps
+    )
+    return replace(working, steps=steps)
+
+
+@pytest.mark.parametrize(("limit_deg", "words"), [(55.0 + 29.0 / 60.0, "On the sphere"), (60.0, "is taken whole")])
+def test_a_composite_without_a_working_says_why(limit_deg: float, words: str) -> None:
+    text = worksheet_text([sheet_of("ocean", leg=Leg(Line.COMPOSITE, limit_deg))])
+    assert "Composite: no working" in text
+    assert words in text
 
 
 def test_text_keeps_to_the_width_and_every_leg_has_a_page() -> None:

@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import math
+import random
 
 import pytest
 from hypothesis import assume, given, settings
@@ -14,6 +15,7 @@ from navcore.errors import NoAnswerError, RangeError
 from navcore.lines import great_circle, rhumb_line
 from navcore.position import Position
 from navcore.sailings.composite import Composite, composite, limits_table
+from navcore.sailings.composite_working import solve_composite
 
 NORTH_PACIFIC = Position(48.5, -(125.0 + 20.0 / 60.0)), Position(41.0 + 20.0 / 60.0, 143.0)
 SOUTHERN_OCEAN = Position(-34.5, 18.0), Position(-(43.0 + 50.0 / 60.0), 146.5)
@@ -193,3 +195,22 @@ def test_the_north_pacific_composite_in_detail() -> None:
         [-(143 + 48.9 / 60), -(174 + 33.8 / 60)], abs=0.05 / 60
     )
     assert (track.initial_course_deg, track.final_course_deg) == pytest.approx((284.1, 238.9), abs=0.06)
+
+
+def test_the_books_formulas_and_the_search_on_the_sphere_agree() -> None:
+    chance = random.Random(1)
+    worked = 0
+    while worked < 200:
+        side = chance.choice((1.0, -1.0))
+        start, end = (Position(side * chance.uniform(-30.0, 60.0), chance.uniform(-180.0, 180.0)) for _ in range(2))
+        limit_deg = side * chance.uniform(max(side * start.lat_deg, side * end.lat_deg), 80.0)
+        try:
+            working = solve_composite(start, end, limit_deg)
+        except NoAnswerError:
+            continue
+        worked += 1
+        track = composite(start, end, limit_deg, SPHERE)
+        assert working.value("distance") == pytest.approx(track.distance_m / METRES_PER_NAUTICAL_MILE, abs=1e-6)
+        courses = {"initial course": track.initial_course_deg, "final course": track.final_course_deg}
+        for symbol, course_deg in courses.items():
+            assert math.remainder(working.number(symbol) - course_deg, 360.0) == pytest.approx(0.0, abs=1e-6)

@@ -219,7 +219,6 @@ def test_a_leg_close_by_the_pole_holds_the_distance_too() -> None:
 @pytest.mark.parametrize(
     ("start", "end"),
     [
-        (Position(10.0, 20.0), Position(10.0, 20.0)),
         (Position(10.0, 20.0), Position(40.0, 20.0)),
         (Position(0.0, 20.0), Position(0.0, 80.0)),
     ],
@@ -232,11 +231,17 @@ def test_where_both_lines_are_one_a_distance_asks_for_a_single_part(start: Posit
 
 
 @pytest.mark.parametrize(
-    "rule", ["0.001 NM", "0.001° longitude", "0.000001 NM apart", f"0.{300 * '0'}1 NM apart", f"0.{300 * '0'}1 NM"]
+    "rule",
+    ["0.001 NM", "0.001° longitude", "0.000001 NM apart", f"0.{300 * '0'}1 NM apart", f"0.{309 * '0'}1° longitude"],
 )
 def test_a_split_into_more_parts_than_anyone_steers_is_refused(rule: str) -> None:
     with pytest.raises(NoAnswerError, match="more than 1000 parts"):
         split_great_circle(SALAL, KUROMATSU, WGS_84, parse_parts(rule))
+
+
+def test_a_leg_of_no_length_has_no_parts_to_steer() -> None:
+    with pytest.raises(NoAnswerError, match="no length"):
+        split_great_circle(SALAL, SALAL, WGS_84, parse_parts("3 parts"))
 
 
 def test_points_keep_to_the_longitude_rule_across_the_antimeridian() -> None:

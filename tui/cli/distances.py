@@ -13,7 +13,7 @@ from navcore.errors import NavError
 from navcore.files.csv_rows import CsvRow, csv_rows
 from tui.cli.arguments import add_figure
 from tui.cli.exit_codes import ExitCode
-from tui.cli.output import data_stream, say
+from tui.cli.output import data_stream, say, writing_to_output
 from tui.cli.progress import Progress
 from tui.cli.verb import Verb
 
@@ -60,21 +60,24 @@ def _convert(stream: BinaryIO, figure: Figure) -> ExitCode:
     columns = leg_columns(headings)
     out = data_stream(errors="surrogateescape")
     writer = csv.writer(out, lineterminator="\n")
-    writer.writerow([*columns.kept(headings), *RESULTS])
+    with writing_to_output():
+        writer.writerow([*columns.kept(headings), *RESULTS])
     done = unreadable = 0
     empty = [""] * len(RESULTS)
     with Progress(stream) as progress:
         while batch := list(islice(rows, _ROWS_AT_A_TIME)):
             ends = [_ends(columns, row) for row in batch]
             results = iter(work([leg for leg in ends if leg is not None], figure))
-            writer.writerows(
-                [*columns.kept(row.cells), *(empty if leg is None else next(results))]
-                for row, leg in zip(batch, ends, strict=True)
-            )
+            with writing_to_output():
+                writer.writerows(
+                    [*columns.kept(row.cells), *(empty if leg is None else next(results))]
+                    for row, leg in zip(batch, ends, strict=True)
+                )
             done += len(batch)
             unreadable += ends.count(None)
             progress.show(done)
-    out.flush()
+    with writing_to_output():
+        out.flush()
     if unreadable:
         say(f"{unreadable} of {done} rows could not be read; their results are empty")
     return ExitCode.UNREADABLE if unreadable else ExitCode.DONE

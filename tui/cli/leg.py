@@ -2,7 +2,7 @@
 
 from __future__ import annotations
 
-from typing import TYPE_CHECKING
+from typing import TYPE_CHECKING, NoReturn
 
 from tui.cli.arguments import POSITION_FORMS, add_figure, add_json
 from tui.cli.exit_codes import ExitCode
@@ -11,6 +11,9 @@ from tui.cli.verb import Verb
 
 if TYPE_CHECKING:
     import argparse
+
+    from navcore.errors import ParseError
+    from navcore.sailings.comparison import ChosenTracks, LegComparison
 
 
 def _add_arguments(parser: argparse.ArgumentParser) -> None:
@@ -87,10 +90,23 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     write = one_leg_json if arguments.json else one_leg_text
     asked = PointsAsked(distances_m, meridians_deg, parallels_deg, every_deg, beside)
     write_data(write(comparison, chosen, speed_kn, asked))
-    if chosen.refusal is not None:
-        say(chosen.refusal)
+    unanswered = _unanswered(comparison, chosen, distances_m)
+    if unanswered:
+        say(unanswered)
         return ExitCode.NO_ANSWER
     return ExitCode.DONE
+
+
+def _unanswered(comparison: LegComparison, chosen: ChosenTracks, distances_m: tuple[float, ...]) -> str:
+    """Return what was asked and does not exist; "" where all does."""
+    from navcore.constants import METRES_PER_NAUTICAL_MILE
+
+    lengths_nmi = [comparison.rhumb_line.distance_nmi, comparison.great_circle.distance_nmi]
+    if chosen.composite is not None:
+        lengths_nmi.append(chosen.composite.distance_m / METRES_PER_NAUTICAL_MILE)
+    if any(distance_m > max(lengths_nmi) * METRES_PER_NAUTICAL_MILE for distance_m in distances_m):
+        return "a point that was asked for lies beyond the end of every line"
+    return chosen.refusal or ""
 
 
 def _distance_m(text: str, speed_kn: float | None) -> float:
@@ -102,10 +118,22 @@ def _distance_m(text: str, speed_kn: float | None) -> float:
 
     try:
         return parse_distance(text) * METRES_PER_NAUTICAL_MILE
-    except ParseError:
+    except ParseError as error:
         if speed_kn is None:
-            raise
+            _refuse_time_without_speed(text, error)
         return parse_duration(text).total_seconds() / SECONDS_PER_HOUR * speed_kn * METRES_PER_NAUTICAL_MILE
+
+
+def _refuse_time_without_speed(text: str, error: ParseError) -> NoReturn:
+    from navcore.errors import ParseError
+    from navcore.text.clock import parse_duration
+
+    try:
+        parse_duration(text)
+    except ParseError:
+        raise error from None
+    advice = "give --speed too, such as --speed 13.5kn, or a distance, such as 300NM"
+    raise ParseError(text, (0, len(text)), "a time along the leg needs a speed", advice) from None
 
 
 VERB = Verb("leg", "work one leg by every line and method", _add_arguments, _run)

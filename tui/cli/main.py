@@ -5,13 +5,14 @@ from __future__ import annotations
 import argparse
 import re
 import traceback
-from typing import TYPE_CHECKING
+from pathlib import Path
+from typing import TYPE_CHECKING, Any
 
 from navcore.errors import NavError, NoAnswerError, ParseError, PlanFileError, RangeError
 from navcore.prints.caution import CAUTION
 from tui.cli import compare, distances, leg, reckon, reconcile, sheet, table, worksheet
 from tui.cli.exit_codes import ExitCode
-from tui.cli.output import ClosedOutputError, let_go_of_output, say, write_data
+from tui.cli.output import CannotWriteError, let_go_of_output, say, write_data
 
 if TYPE_CHECKING:
     from collections.abc import Sequence
@@ -29,12 +30,16 @@ VERBS: tuple[Verb, ...] = (
     sheet.VERB,
 )
 
-_LEADING_MINUS = re.compile(r"^-(?=[0-9])")
+_LEADING_MINUS = re.compile(r"-\d")
 _EPILOG = f"A word that is no verb is taken for a plan, and its leg table is printed. {CAUTION}"
 
 
 class _Parser(argparse.ArgumentParser):
-    """A parser whose help goes out as data does, and whose version costs nothing until it is asked for."""
+    """A parser whose help goes out as data does, and to which a minus and a digit begin a value, never an option."""
+
+    def __init__(self, **settings: Any) -> None:
+        super().__init__(**settings)
+        self._negative_number_matcher = _LEADING_MINUS
 
     def print_help(self, file: object = None) -> None:
         if file is None:
@@ -50,8 +55,8 @@ def run(words: Sequence[str]) -> ExitCode:
     except BrokenPipeError:
         let_go_of_output()
         return ExitCode.DONE
-    except ClosedOutputError:
-        say("standard output is closed: there is nowhere to write; give it a file, or use -o")
+    except CannotWriteError as error:
+        say(str(error))
         return ExitCode.WRONG_USAGE
     except (NavError, OSError) as error:
         return _said(error)
@@ -67,9 +72,12 @@ def _run(words: Sequence[str]) -> ExitCode:
         parser.print_help()
         return ExitCode.DONE
     if words[0] not in verbs and not words[0].startswith("-"):
+        if not Path(words[0]).suffix and not Path(words[0]).exists():
+            say(f"{words[0]} is no verb and no file; verbs: {', '.join(verbs)}; or type the name of a plan file")
+            return ExitCode.WRONG_USAGE
         words = [table.VERB.name, *words]
     try:
-        arguments = parser.parse_args([_LEADING_MINUS.sub("−", word) for word in words])
+        arguments = parser.parse_args(words)
     except SystemExit as stop:
         return ExitCode.WRONG_USAGE if stop.code else ExitCode.DONE
     return verbs[arguments.verb].run(arguments)

@@ -6,7 +6,7 @@ from pathlib import Path
 from typing import TYPE_CHECKING
 
 from tui.cli.exit_codes import ExitCode
-from tui.cli.output import is_terminal, say, write_bytes
+from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
 
 if TYPE_CHECKING:
@@ -21,6 +21,10 @@ MEDIA = ("pdf", "svg", "json")
 PROJECTIONS = ("mercator", "stereographic", "lambert", "gnomonic")
 _SUFFIXES = {".pdf": "pdf", ".svg": "svg", ".json": "json"}
 _PAPERS = ("A4", "A3", "A2", "A1", "A0")
+_TRUE_SCALES = {"mercator": 1, "stereographic": 1, "lambert": 2, "gnomonic": 0}
+"""How many latitudes of true scale each projection takes."""
+_WIDEST_MARGIN_MM = 40.0
+_POLE_DEG = 90.0
 
 
 def _add_arguments(parser: argparse.ArgumentParser) -> None:
@@ -81,13 +85,9 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     data = _written(solution, sheets, medium, arguments.sheet)
     if medium != "json":
         _say_lacking(solution.plan)
-    if arguments.file is None:
-        write_bytes(data)
-    else:
-        from navcore.files.store import write_whole
-
-        write_whole(Path(arguments.file), data)
-        say(f"plotting sheet written to {arguments.file}: {_said(sheets)}")
+    put("plotting sheet", data, arguments.file, arguments.plan)
+    if arguments.file is not None:
+        say(_said(sheets))
     return ExitCode.DONE
 
 
@@ -99,20 +99,45 @@ def _options(arguments: argparse.Namespace) -> SheetOptions:
     from navcore.charts.choice import SheetKind
     from navcore.charts.paper import paper_named
     from navcore.prints.plotting_sheet import SheetOptions
-    from navcore.text.position import parse_latitude, parse_longitude, parse_position
+    from navcore.text.position import parse_longitude, parse_position
 
-    latitudes = arguments.true_scale.split(",") if arguments.true_scale else []
     corners = [parse_position(text) for text in arguments.corners] if arguments.corners else None
     return SheetOptions(
         kind=SheetKind(arguments.projection),
-        paper=paper_named(arguments.paper, arguments.margin),
+        paper=paper_named(arguments.paper, _margin_mm(arguments.margin)),
         scale=None if arguments.scale is None else _scale(arguments.scale),
         landscape=arguments.landscape,
         meridian_deg=None if arguments.meridian is None else parse_longitude(arguments.meridian),
-        true_scale_deg=tuple(parse_latitude(text) for text in latitudes),
+        true_scale_deg=() if arguments.true_scale is None else _true_scale(arguments.true_scale, arguments.projection),
         corners=(corners[0], corners[1]) if corners else None,
         coast=arguments.coast,
     )
+
+
+def _margin_mm(margin_mm: float) -> float:
+    from navcore.errors import ParseError
+
+    if not 0.0 <= margin_mm <= _WIDEST_MARGIN_MM:
+        typed = f"{margin_mm:g}"
+        raise ParseError(typed, (0, len(typed)), "this is no margin", f"type 0 to {_WIDEST_MARGIN_MM:g} for --margin")
+    return margin_mm
+
+
+def _true_scale(text: str, projection: str) -> tuple[float, ...]:
+    """Return the latitudes of true scale, as many as the projection has."""
+    from navcore.errors import ParseError
+    from navcore.text.position import parse_latitude
+
+    latitudes = tuple(parse_latitude(part) for part in text.split(","))
+    most = _TRUE_SCALES[projection]
+    if len(latitudes) > most:
+        reason = f"a {projection} sheet takes {('no latitude', 'one latitude', 'two latitudes')[most]} of true scale"
+        advice = "leave --true-scale out" if not most else f"type --true-scale {','.join(text.split(',')[:most])}"
+        raise ParseError(text, (0, len(text)), reason, advice)
+    if projection != "stereographic" and max(map(abs, latitudes)) == _POLE_DEG:
+        reason = f"a {projection} sheet has no scale at a pole"
+        raise ParseError(text, (0, len(text)), reason, "type a latitude short of it, or --projection stereographic")
+    return latitudes
 
 
 def _scale(text: str) -> float:

@@ -7,7 +7,7 @@ from pathlib import Path
 from typing import TYPE_CHECKING
 
 from tui.cli.exit_codes import ExitCode
-from tui.cli.output import is_terminal, say, write_bytes, write_data
+from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
 
 if TYPE_CHECKING:
@@ -69,15 +69,7 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
         if medium == "pdf"
         else _text(solution, arguments, medium).encode("utf-8", "backslashreplace")
     )
-    if arguments.file is not None:
-        from navcore.files.store import write_whole
-
-        write_whole(Path(arguments.file), data)
-        say(f"{'read-back sheet' if arguments.read_back else 'leg table'} written to {arguments.file}")
-    elif medium == "pdf":
-        write_bytes(data)
-    else:
-        write_data(data.decode("utf-8"))
+    put("read-back sheet" if arguments.read_back else "leg table", data, arguments.file, arguments.plan)
     return ExitCode.DONE
 
 

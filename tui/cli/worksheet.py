@@ -6,7 +6,7 @@ from pathlib import Path
 from typing import TYPE_CHECKING
 
 from tui.cli.exit_codes import ExitCode
-from tui.cli.output import is_terminal, say, write_bytes, write_data
+from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
 
 if TYPE_CHECKING:
@@ -43,15 +43,7 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
         return ExitCode.WRONG_USAGE
     sheets = make_worksheet(solution, None if arguments.leg is None else (arguments.leg - 1,))
     data = _written(solution, sheets, medium)
-    if arguments.file is not None:
-        from navcore.files.store import write_whole
-
-        write_whole(Path(arguments.file), data)
-        say(f"worksheet written to {arguments.file}")
-    elif medium == "pdf":
-        write_bytes(data)
-    else:
-        write_data(data.decode("utf-8"))
+    put("worksheet", data, arguments.file, arguments.plan)
     return ExitCode.DONE
 
 
