@@ -11,7 +11,7 @@ from navcore.angles import difference_of_longitude
 
 if TYPE_CHECKING:
     from navcore.charts.coast import ShoreLines
-    from navcore.charts.track import ToPlane, Window
+    from navcore.charts.track import BoolArray, ToPlane, Window
     from navcore.trigonometry import FloatArray
 
 _RUN = 32
@@ -37,14 +37,19 @@ def lay_off_shore(lines: ShoreLines, to_plane: ToPlane, central_lon_deg: float, 
 
 
 def thinned(place: FloatArray, step: float) -> FloatArray:
-    """Return polylines without points that fall in the same square of a size as the one before; their ends stay."""
+    """Return polylines without the points that `is_apart` passes over."""
+    left: FloatArray = place[is_apart(place, step)]
+    return left
+
+
+def is_apart(place: FloatArray, step: float) -> BoolArray:
+    """Return which points of polylines fall in another square of a size than the one before; their ends do, always."""
     square = np.floor(place / step)
     kept = np.ones(len(place), dtype=bool)
     kept[1:] = np.any(square[1:] != square[:-1], axis=1)
     # A gap differs from everything, itself included, so the point before it has still to be kept.
     kept[:-1] |= np.isnan(place[1:, 0])
-    left: FloatArray = place[kept]
-    return left
+    return kept
 
 
 def _without_twins(place: FloatArray, step: float) -> FloatArray:

@@ -98,7 +98,7 @@ def _letter(cells: Cells, place: tuple[int, int], texts: tuple[str, ...], tone: 
     """Letter a waypoint with the first of the texts that has room: clear of legs, else the last of them over a leg."""
     for text in dict.fromkeys(texts):
         for column, row in _beside(*place, _width(text)):
-            if _has_room(cells, column, row, text) and not of_legs[row, column : column + _width(text)].any():
+            if _has_room(cells, column, row, text, of_legs):
                 cells.write(column, row, text, tone)
                 return
     for column, row in _beside(*place, _width(texts[-1])):
@@ -107,12 +107,23 @@ def _letter(cells: Cells, place: tuple[int, int], texts: tuple[str, ...], tone: 
             return
 
 
-def _has_room(cells: Cells, column: int, row: int, text: str) -> bool:
-    """Say whether a text has room, a free cell on either side of it, so that no number runs into another."""
-    if column < 0 or column + _width(text) > cells.columns:
+def _has_room(cells: Cells, column: int, row: int, text: str, of_legs: Mask | None = None) -> bool:
+    """Say whether a text has room, a free cell on either side of it, so that no number runs into another.
+
+    Args:
+        cells: What it would stand on.
+        column: Where it would begin.
+        row: Likewise.
+        text: The text.
+        of_legs: Cells that it must keep clear of, where it must.
+    """
+    end = column + _width(text)
+    if column < 0 or end > cells.columns:
         return False
-    left, right = max(column - 1, 0), min(column + _width(text) + 1, cells.columns)
-    return cells.is_free(left, row, right - left)
+    left = max(column - 1, 0)
+    if not cells.is_free(left, row, min(end + 1, cells.columns) - left):
+        return False
+    return of_legs is None or not of_legs[row, column:end].any()
 
 
 def _beside(column: int, row: int, width: int) -> Iterator[tuple[int, int]]:
@@ -134,7 +145,7 @@ def letter_graticule(cells: Cells, graticule: Graticule, of_legs: Mask) -> None:
         interval_min = graticule.interval_min(is_meridian=line.is_meridian)
         text = format_graticule_line(line.value_deg, is_meridian=line.is_meridian, interval_min=interval_min)
         for column, row in _ends(cells, line, len(text)):
-            if _has_room(cells, column, row, text) and not of_legs[row, column : column + len(text)].any():
+            if _has_room(cells, column, row, text, of_legs):
                 cells.write(column, row, text, Tone.QUIET)
                 break
 
@@ -165,7 +176,7 @@ def draw_bar(cells: Cells, view: View, of_legs: Mask) -> None:
     text = f"├{'─' * max(bar - 2, 0)}┤ {length_nmi:g} NM at the cross"
     for column in (cells.columns - len(text) - 1, 1):
         for row in (0, cells.rows - 2):
-            if _has_room(cells, column, row, text) and not of_legs[row, column : column + len(text)].any():
+            if _has_room(cells, column, row, text, of_legs):
                 cells.write(column, row, text, Tone.PLAIN)
                 return
 

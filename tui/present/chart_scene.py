@@ -8,7 +8,7 @@ import numpy as np
 
 from navcore.charts.choice import Coverage, SheetKind, choose_projection, coverage_of
 from navcore.charts.coast import load_shore_lines
-from navcore.charts.shore import LaidShore, lay_off_shore
+from navcore.charts.shore import LaidShore, is_apart, lay_off_shore
 from navcore.charts.track import Arc, LaidArcs, TrackLeg
 from navcore.errors import NoAnswerError
 from navcore.plan.arcs import arcs_of
@@ -44,7 +44,10 @@ class LaidTrack:
         tolerance_m = _TOLERANCE_DOTS * view.dot_m
         self._laid.look_at(view.window_m, tolerance_m)
         place_m, arc = self._laid.joined(tolerance_m)
-        return Seen(_in_dots(place_m, view), self._leg[arc], self._is_great_circle[arc])
+        place = _in_dots(place_m, view)
+        kept = is_apart(place, 1.0)
+        arc = arc[kept]
+        return Seen(place[kept], self._leg[arc], self._is_great_circle[arc])
 
 
 class Seen:
