@@ -29,6 +29,7 @@ GRADUATIONS_MIN: tuple[float, ...] = (0.1, 0.5, 1.0, 5.0, 10.0, 30.0, 60.0, 300.
 _CLOSEST_GRADUATION_MM = 1.2
 _CLOSEST_MERIDIANS_MM = 5.0
 _SAMPLES = 41
+_MOST_LINES = 60
 
 
 class FrameEnd(NamedTuple):
@@ -115,26 +116,44 @@ class Graticule:
 
 
 class _Extent(NamedTuple):
-    """What the neat line holds; longitudes are from the central meridian."""
+    """What the neat line holds; longitudes are from the central meridian.
+
+    Attributes:
+        south_deg: Latitude.
+        north_deg: Latitude.
+        west_deg: Relative longitude.
+        east_deg: Relative longitude.
+        holds_pole: Whether a pole is shown.
+        middle_deg: Latitude and longitude in the middle of the sheet, or of what is shown nearest to that.
+    """
 
     south_deg: float
     north_deg: float
     west_deg: float
     east_deg: float
     holds_pole: bool
+    middle_deg: tuple[float, float]
 
 
 def make_graticule(plane: PaperPlane) -> Graticule:
-    """Return the graticule of a sheet's plane."""
+    """Return the graticule of a sheet's plane; without a line where nothing of the Earth is shown."""
     extent = _extent(plane)
+    if extent is None:
+        none = np.empty(0)
+        return Graticule(
+            plane, INTERVALS_MIN[-1], INTERVALS_MIN[-1], INTERVALS_MIN[-1], INTERVALS_MIN[-1], (), *[none] * 3
+        )
     lat_mm, lon_mm = _millimetres_per_minute(plane, extent)
     wanted_mm = min(40.0, max(20.0, min(plane.width_mm, plane.height_mm) / 6.0))
-    lat_interval = _interval_min(wanted_mm / lat_mm, INTERVALS_MIN)
+    # Where the scale in the middle is far from that elsewhere, lines so close would be thousands.
+    least_lat_min = (extent.north_deg - extent.south_deg) * 60.0 / _MOST_LINES
+    least_lon_min = (extent.east_deg - extent.west_deg) * 60.0 / _MOST_LINES
+    lat_interval = _interval_min(max(wanted_mm / lat_mm, least_lat_min), INTERVALS_MIN)
     of_the_circle = [value for value in INTERVALS_MIN if not extent.holds_pole or value in {60.0, 300.0, 600.0, 1800.0}]
-    lon_interval = _interval_min(wanted_mm / lon_mm, of_the_circle)
+    lon_interval = _interval_min(max(wanted_mm / lon_mm, least_lon_min), of_the_circle)
     meridians = _multiples_deg(extent.west_deg, extent.east_deg, lon_interval, plane.projection.central_lon_deg)
     parallels = _multiples_deg(extent.south_deg, extent.north_deg, lat_interval, 0.0)
-    limits = _limits_deg(plane, meridians, lat_interval, lon_interval)
+    limits = _limits_deg(plane, extent, meridians, lat_interval, lon_interval)
     lines = (*_meridians(plane, meridians, extent, limits), *_parallels(plane, parallels, extent))
     return Graticule(
         plane,
@@ -149,16 +168,21 @@ def make_graticule(plane: PaperPlane) -> Graticule:
     )
 
 
-def _extent(plane: PaperPlane) -> _Extent:
+def _extent(plane: PaperPlane) -> _Extent | None:
     x_mm = np.linspace(0.0, plane.width_mm, _SAMPLES)
     y_mm = np.linspace(0.0, plane.height_mm, _SAMPLES)
     lat_deg, lon_deg = plane.to_earth(*(value.ravel() for value in np.meshgrid(x_mm, y_mm)))
-    shown = np.isfinite(lat_deg)
+    shown = np.flatnonzero(np.isfinite(lat_deg))
+    if not shown.size:
+        return None
+    from_middle = np.hypot(*(np.divmod(shown, _SAMPLES) - np.array([[_SAMPLES // 2]])))
+    nearest = shown[np.argmin(from_middle)]
+    middle = float(lat_deg[nearest]), float(lon_deg[nearest])
     south, north = float(np.min(lat_deg[shown])), float(np.max(lat_deg[shown]))
     relative = wrap_180(lon_deg[shown] - plane.projection.central_lon_deg)
     poles = [pole for pole in (-90.0, 90.0) if plane.holds(plane.to_mm(pole, plane.projection.central_lon_deg))]
     if poles:
-        return _Extent(min(south, *poles), max(north, *poles), -180.0, 180.0, holds_pole=True)
+        return _Extent(min(south, *poles), max(north, *poles), -180.0, 180.0, holds_pole=True, middle_deg=middle)
     # The samples may miss the furthest point of a curved edge by a little.
     lat_slack, lon_slack = (north - south) / _SAMPLES, float(np.ptp(relative)) / _SAMPLES
     west, east = float(np.min(relative)) - lon_slack, float(np.max(relative)) + lon_slack
@@ -168,13 +192,13 @@ def _extent(plane: PaperPlane) -> _Extent:
         max(-180.0, west),
         min(180.0, east),
         holds_pole=False,
+        middle_deg=middle,
     )
 
 
 def _millimetres_per_minute(plane: PaperPlane, extent: _Extent) -> tuple[float, float]:
     """Return the paper's millimetres in a minute of latitude and of longitude, halfway out where a pole is shown."""
-    x_mm, y_mm = plane.width_mm / 2.0, plane.height_mm / 2.0
-    lat_deg, lon_deg = (float(value) for value in plane.to_earth(x_mm, y_mm))
+    lat_deg, lon_deg = extent.middle_deg
     if extent.holds_pole:
         pole_deg = 90.0 if extent.north_deg == 90.0 else -90.0
         lat_deg = 0.5 * (pole_deg + (extent.south_deg if pole_deg > 0.0 else extent.north_deg))
@@ -204,13 +228,13 @@ def _multiples_deg(from_deg: float, to_deg: float, interval_min: float, origin_d
 
 
 def _limits_deg(
-    plane: PaperPlane, meridians_deg: FloatArray, lat_interval_min: float, lon_interval_min: float
+    plane: PaperPlane, extent: _Extent, meridians_deg: FloatArray, lat_interval_min: float, lon_interval_min: float
 ) -> FloatArray:
     """Return for each meridian the latitude, north or south, beyond which it is not drawn."""
     step_deg = lat_interval_min / 60.0
     lat_deg = np.arange(0.0, 90.0, step_deg)
-    middle_lat_deg, middle_lon_deg = plane.to_earth(plane.width_mm / 2.0, plane.height_mm / 2.0)
-    pole_sign = 1.0 if float(middle_lat_deg) >= 0.0 else -1.0
+    middle_lat_deg, middle_lon_deg = extent.middle_deg
+    pole_sign = 1.0 if middle_lat_deg >= 0.0 else -1.0
     factor = plane.projection.scale_factor(pole_sign * lat_deg, middle_lon_deg) * 1000.0 / plane.scale
     mm_per_degree = degree_of_longitude_m(lat_deg, plane.projection.figure) * factor
 

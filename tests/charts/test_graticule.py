@@ -138,3 +138,15 @@ def test_a_sheet_with_a_centre_is_ruled_by_radii_and_angles(plane: PaperPlane) -
         x_mm = ruling.centre_mm[0] + sign * radius * math.sin(math.radians(angle))
         y_mm = ruling.centre_mm[1] + sign * radius * math.cos(math.radians(angle))
         assert (x_mm, y_mm) == pytest.approx((crossing.x_mm, crossing.y_mm), abs=1e-6)
+
+
+def test_a_sheet_with_nothing_of_the_earth_has_no_line() -> None:
+    plane = PaperPlane(Lambert(WGS_84, 0.0, (40.0, 50.0), 45.0), 1e7, 9e7, -9e8, 100.0, 100.0)
+    graticule = make_graticule(plane)
+    assert not graticule.lines
+    assert not graticule.intersections
+
+
+def test_a_sheet_of_the_whole_earth_has_no_more_lines_than_can_be_told_apart() -> None:
+    plane = PaperPlane(Lambert(WGS_84, 0.0, (-56.0, 61.0), 2.0), 4e11, 3e10, 3e10, 160.0, 80.0)
+    assert len(make_graticule(plane).lines) < 200

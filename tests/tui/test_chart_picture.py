@@ -7,14 +7,16 @@ from dataclasses import replace
 
 import numpy as np
 import pytest
-from hypothesis import given
+from hypothesis import given, settings
 from hypothesis import strategies as st
 
 from navcore.charts.choice import SheetKind
+from navcore.errors import NoAnswerError
 from navcore.plan.model import Leg, Line, Plan, Waypoint
 from navcore.plan.solve import solve
 from navcore.position import Position
 from navcore.sailings.parts import Parts, PartsRule
+from navcore.text.plain import cell_width
 from navcore.text.position import format_position
 from tui.present.cells import Cells, spelled
 from tui.present.chart_letters import MARK, MARK_HERE
@@ -281,3 +283,54 @@ def test_bearing_and_distance_are_those_of_both_lines_from_the_waypoint() -> Non
     assert f"{worked.rhumb_course_deg:05.1f}°T {worked.rhumb_distance_m / 1852.0:.1f} NM" in words
     assert f"{worked.initial_course_deg:05.1f}°T {worked.great_circle_distance_m / 1852.0:.1f} NM" in words
     assert "".join(piece.text for piece in readout(solution, on_turn, 2, 158)[1]) == "on waypoint 2 Turn"
+
+
+ANYWHERE = st.builds(
+    Position,
+    st.one_of(st.floats(-90.0, 90.0), st.sampled_from((90.0, -90.0, 0.0))),
+    st.one_of(st.floats(-180.0, 180.0), st.sampled_from((180.0, -180.0))),
+)
+STEPS = st.lists(
+    st.tuples(st.integers(-40, 40), st.integers(-20, 20), st.sampled_from((0.01, 0.5, 2.0, 16.0))), max_size=4
+)
+
+
+@settings(max_examples=40)
+@given(
+    st.lists(ANYWHERE, max_size=5), st.sampled_from(list(SheetKind)), STEPS, st.integers(0, 9), st.integers(1, 90),
+    st.integers(1, 30),
+)  # fmt: skip
+def test_any_plan_from_anywhere_at_any_size_fills_its_cells_and_no_more(
+    places: list[Position],
+    kind: SheetKind,
+    steps: list[tuple[int, int, float]],
+    row: int,
+    columns: int,
+    rows: int,
+) -> None:
+    plan = Plan(tuple(Waypoint("湾 é🚢", place) for place in places), tuple(Leg(Line.GREAT_CIRCLE) for _ in places[1:]))
+    solution = solve(plan)
+    try:
+        projection = projection_of(solution, kind)
+    except NoAnswerError:
+        return
+    view = fitted(projection, coverage(solution), columns, rows)
+    row = min(row, max(2 * len(places) - 1, 0))
+    for right, up, factor in ((0, 0, 1.0), *steps):
+        view = (view.moved(right, up) or view).zoomed(factor)
+        lines = picture(Scene(solution, view.projection), view, row, Shown(shore=False)).lines()
+        assert len(lines) == rows
+        for line in lines:
+            assert sum(cell_width(letter) for piece in line for letter in piece.text) == columns
+        assert len(readout(solution, view, row, max(columns - 2, 1))) == 3
+
+
+def test_over_the_apex_of_a_cone_there_is_no_scale_to_read() -> None:
+    solution = solve(Plan((Waypoint("", Position(80.0, 10.0)), Waypoint("", Position(60.0, 40.0))), (Leg(),)))
+    view = fitted(projection_of(solution, SheetKind.LAMBERT), coverage(solution), 80, 20).centred(Position(90.0, 25.0))
+    assert "the chart has no scale here" in "".join(piece.text for piece in readout(solution, view, 0, 78)[0])
+    assert not any(
+        "NM at the cross" in piece.text
+        for line in picture(Scene(solution, view.projection), view, 0, Shown(shore=False)).lines()
+        for piece in line
+    )

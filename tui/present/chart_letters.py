@@ -168,7 +168,10 @@ def draw_bar(cells: Cells, view: View, of_legs: Mask) -> None:
     position = view.position
     if position is None or not view.projection.conformal:
         return
-    cell_m = ACROSS * view.dot_m / float(view.projection.scale_factor(*position))
+    factor = float(view.projection.scale_factor(*position))
+    if not math.isfinite(factor):
+        return
+    cell_m = ACROSS * view.dot_m / factor
     most_nmi = _LONGEST_BAR * cell_m / METRES_PER_NAUTICAL_MILE
     power = 10.0 ** math.floor(math.log10(most_nmi))
     length_nmi = next(step * power for step in (5.0, 2.0, 1.0) if step * power <= most_nmi)

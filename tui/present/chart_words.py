@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import math
 from typing import TYPE_CHECKING
 
 from navcore.constants import METRES_PER_NAUTICAL_MILE
@@ -61,12 +62,14 @@ def _of_place(view: View, position: Position | None) -> Iterator[str]:
         yield "nothing of the Earth is shown here"
         return
     place = format_position(position)
+    factor = float(view.projection.scale_factor(*position))
     if not view.projection.conformal:
         yield f"{place}   angles and distances can't be measured on this chart"
-    else:
-        factor = format_number(float(view.projection.scale_factor(*position)), 4)
+    elif math.isfinite(factor):
         convergence = format_convergence(float(view.projection.convergence_deg(*position)))
-        yield f"{place}   scale factor {factor}   convergence {convergence}"
+        yield f"{place}   scale factor {format_number(factor, 4)}   convergence {convergence}"
+    else:
+        yield f"{place}   the chart has no scale here"
     yield place
 
 
