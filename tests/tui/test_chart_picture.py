@@ -334,3 +334,14 @@ def test_over_the_apex_of_a_cone_there_is_no_scale_to_read() -> None:
         for line in picture(Scene(solution, view.projection), view, 0, Shown(shore=False)).lines()
         for piece in line
     )
+
+
+def test_the_leg_under_the_cursor_is_drawn_once_so_that_its_gaps_stay_open() -> None:
+    plan = Plan(PACIFIC.waypoints[:2], (Leg(Line.GREAT_CIRCLE),))
+    solution = solve(plan)
+    projection = projection_of(solution, SheetKind.MERCATOR)
+    view = fitted(projection, coverage(solution), 120, 21)
+    lines = picture(Scene(solution, projection), view, 1, Shown(shore=False, other_lines=False)).lines()
+    tones = {piece.tone for line in lines for piece in line if any(letter > "\u2800" for letter in piece.text)}
+    assert Tone.STRONG in tones
+    assert Tone.HEAD not in tones

@@ -69,9 +69,9 @@ def _of_graticule(graticule: Graticule) -> FloatArray:
 
 
 def _legs(scene: Scene, view: View, leg: int | None, *, other_lines: bool) -> Iterator[tuple[Patterns, Tone]]:
-    """Yield the legs, the other lines of the one under the cursor, and that one once more, thicker."""
+    """Yield the legs but the one under the cursor, that one's other lines, and itself, thicker."""
     seen = scene.track.seen(view)
-    yield _drawn(view, *_by_kind(seen)), Tone.HEAD
+    yield _drawn(view, *_by_kind(seen, without=leg)), Tone.HEAD
     if leg is None:
         return
     if other_lines:
@@ -79,8 +79,9 @@ def _legs(scene: Scene, view: View, leg: int | None, *, other_lines: bool) -> It
     yield _drawn(view, *_by_kind(seen, leg), thick=True), Tone.STRONG
 
 
-def _by_kind(seen: Seen, leg: int | None = None) -> tuple[Lines, Lines]:
-    return (seen.of(great_circle=False, leg=leg), WHOLE), (seen.of(great_circle=True, leg=leg), BROKEN)
+def _by_kind(seen: Seen, leg: int | None = None, without: int | None = None) -> tuple[Lines, Lines]:
+    rhumb_lines = seen.of(great_circle=False, leg=leg, without=without)
+    return (rhumb_lines, WHOLE), (seen.of(great_circle=True, leg=leg, without=without), BROKEN)
 
 
 def _drawn(view: View, *lines: Lines, thick: bool = False) -> Patterns:

@@ -56,11 +56,13 @@ class Seen:
     def __init__(self, place: FloatArray, leg: npt.NDArray[np.int64], is_great_circle: npt.NDArray[np.bool_]) -> None:
         self._place, self._leg, self._is_great_circle = place, leg, is_great_circle
 
-    def of(self, *, great_circle: bool, leg: int | None = None) -> FloatArray:
-        """Return those of a kind, of one leg or of all."""
+    def of(self, *, great_circle: bool, leg: int | None = None, without: int | None = None) -> FloatArray:
+        """Return those of a kind: of one leg, of all legs, or of all but one."""
         wanted = self._is_great_circle == great_circle
         if leg is not None:
             wanted &= self._leg == leg
+        if without is not None:
+            wanted &= self._leg != without
         place: FloatArray = self._place[wanted]
         return place
 
@@ -82,8 +84,9 @@ class Scene:
         worked = [index for index, leg in enumerate(solution.legs) if leg.refusal is None]
         arcs = [(index, arc) for index in worked for arc in arcs_of(solution, index)]
         self.track = LaidTrack(arcs, solution, projection)
-        is_same = before is not None and before.projection == projection
-        self.laid_shore: LaidShore | None = before.laid_shore if before is not None and is_same else None
+        self.laid_shore: LaidShore | None = None
+        if before is not None and before.projection == projection:
+            self.laid_shore = before.laid_shore
         self._other: tuple[int, LaidTrack] | None = None
 
     def lay_shore(self) -> None:
