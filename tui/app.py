@@ -150,7 +150,8 @@ class Workbook(Desk):
         if self.page.is_typing and command_id not in _WHILE_TYPING:
             self.say("a row is open: Enter takes it, Esc leaves it", alert=True)
         elif command_id in PAGES:
-            self.run_worker(self._turn_to(command_id))
+            if command_id != self._seen:
+                self.run_worker(self._turn_to(command_id))
         elif command_id == "page.next":
             names = list(PAGES)
             self.run_worker(self._turn_to(names[(names.index(self._seen) + 1) % len(names)]))

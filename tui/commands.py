@@ -143,7 +143,7 @@ COMMANDS: tuple[Command, ...] = (
     Command("write.text", "Write text", ("t",), _T, "writes the leg table as text and says where it went", "text"),
     Command("write.csv", "Write CSV", ("v",), _T, "writes the leg table as CSV and says where it went", "CSV"),
     Command("save", "Save", ("s", "ctrl+s"), _E, "writes the plan to its file, whole or not at all", "save"),
-    Command("passage", "Passage page", ("f2",), _E, "waypoints and legs, and the working of the leg"),
+    Command("passage", "Passage page", ("f2", "escape"), _E, "waypoints and legs, and the working of the leg"),
     Command("chart", "Chart page", ("f3",), _E, "the plan on a chart, and what lies under the cross"),
     Command("print", "Print page", ("f7",), _E, "the leg table as it will be printed"),
     Command("page.next", "Next page", ("tab",), _E, "turns to the next page"),

@@ -367,3 +367,16 @@ def test_another_plan_is_opened_from_the_list(tmp_path: Path, plan: Path) -> Non
         await desk.until(lambda: desk.session.path is None)
 
     use(journey, tmp_path / "state", plan)
+
+
+def test_escape_steps_back_to_the_passage_from_every_page(tmp_path: Path, plan: Path) -> None:
+    async def journey(desk: Desk) -> None:
+        for page in ("f3", "f7"):
+            await desk.press("down", page)
+            await desk.until(lambda: not any(line.startswith("►") for line in desk.lines()))
+            await desk.press("escape")
+            await desk.until(lambda: any(line.startswith("►") for line in desk.lines()))
+        await desk.press("escape")
+        assert not desk.session.is_changed
+
+    use(journey, tmp_path / "state", plan)
