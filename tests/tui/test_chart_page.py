@@ -125,7 +125,9 @@ def test_a_passage_is_begun_on_an_empty_chart(tmp_path: Path) -> None:
         await desk.sees("a adds the first waypoint at the cross")
         await desk.press("g")
         await desk.sees("there is no leg yet")
-        await desk.press("a", "right", "up", "a", "home")
+        await desk.press("a", "a")
+        await desk.sees("waypoint 1 is there already")
+        await desk.press("right", "up", "a", "home")
         await desk.sees("on waypoint 2")
         assert len(desk.session.plan.legs) == 1
         await desk.press("p", "p", "p", "p")

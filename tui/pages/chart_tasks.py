@@ -107,8 +107,11 @@ def _add(page: ChartPage) -> None:
         page.desk.say("nothing of the Earth is under the cross", alert=True)
         return
     read = parse_position(format_position(position))
-    page.look_at(page.view.centred(read))
     index = place_below(page.session.plan, page.session.row)
+    if index and page.session.plan.waypoints[index - 1].position == read:
+        page.desk.say(f"waypoint {index} is there already: move the cross first", alert=True)
+        return
+    page.look_at(page.view.centred(read))
     name = f"add waypoint {index + 1} at the cross"
     page.desk.commit(name, lambda plan: insert_waypoint(plan, index, Waypoint("", read)), row_of_waypoint(index))
 

@@ -96,7 +96,8 @@ def _from_waypoint(solution: Solution, row: int, position: Position | None, cell
     room = cells - cell_width(both) - cell_width("from : ")
     if room >= _SHORTEST_NAME:
         yield f"from {fit(called, room)}: {both}"
-    yield both
+    yield f"{index + 1}: {both}"
+    yield f"{index + 1}: RL {by_rhumb}"
     yield f"RL {by_rhumb}"
 
 
