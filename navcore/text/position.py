@@ -33,6 +33,8 @@ if TYPE_CHECKING:
     from collections.abc import Sequence
 
 _ADVICE = f"type latitude, then longitude, such as {EXAMPLE}"
+_NO_SIDE_DEG = {LATITUDE: (0.0,), LONGITUDE: (0.0, 180.0)}
+"""What is on neither side, so that no letter is missing: the equator, Greenwich and the meridian opposite."""
 _EXPONENT = re.compile(r"\d+(?:\.\d*)?[eE][-+]\d+")
 _SIGNED = re.compile(
     r"(?P<lat_sign>[+-]?)(?P<lat>\d+(?:\.\d+)?) ?°?(?P<between> *, *| +)(?P<lon_sign>[+-]?)(?P<lon>\d+(?:\.\d+)?) ?°?",
@@ -173,6 +175,8 @@ def _signed_alone(text: str, tokens: Sequence[Token], axis: Axis) -> float:
     kinds = [token.kind for token in tokens]
     if kinds[:1] in (["+"], ["-"]) and kinds[1:] in ([NUMBER], [NUMBER, "°"]):
         return read_signed(text, kinds[0], tokens[1:], axis)
+    if kinds in ([NUMBER], [NUMBER, "°"]) and float(tokens[0].text) in _NO_SIDE_DEG[axis]:
+        return float(tokens[0].text)
     bare = text[tokens[0].start : tokens[-1].end].lstrip("+-−–‐‑ ")
     shown = f"{bare}{axis.letters[0]} or {bare}{axis.letters[1]}" if bare else axis.example
     end = tokens[-1].end

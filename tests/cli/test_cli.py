@@ -285,7 +285,7 @@ def test_a_print_never_replaces_the_plan_it_is_made_from(verb: str, tmp_path: Pa
     before = plan.read_bytes()
     link.symlink_to(plan)
     for target in (plan, link):
-        done = legbook(verb, str(plan), "-o", str(target))
+        done = legbook(verb, str(plan), "--as", "json", "-o", str(target))
         assert done.returncode == 2
         assert b"is the plan itself" in done.stderr
     assert plan.read_bytes() == before
@@ -339,3 +339,11 @@ def test_reckoning_along_a_parallel_is_called_what_it_is() -> None:
 def test_from_a_pole_no_table_answers_on_a_course_that_is_none() -> None:
     tables = json.loads(legbook("reckon", "90N 010W", "135/100", "--json").stdout)["tables"]
     assert tables["middle_latitude_to"] is tables["mercator_to"] is None
+
+
+@pytest.mark.parametrize("verb", ["table", "worksheet", "sheet"])
+def test_an_ending_that_stands_for_nothing_is_refused_by_name(verb: str, tmp_path: Path) -> None:
+    done = legbook(verb, NORTH_PACIFIC, "-o", str(tmp_path / "x.bmp"))
+    assert done.returncode == 2
+    assert b".bmp stands for no print of this kind; end the file with one of ." in done.stderr
+    assert list(tmp_path.iterdir()) == []

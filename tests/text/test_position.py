@@ -8,7 +8,7 @@ import pytest
 from hypothesis import given, settings
 from hypothesis import strategies as st
 
-from navcore.errors import RangeError
+from navcore.errors import ParseError, RangeError
 from navcore.position import Position
 from navcore.text.position import (
     format_icao,
@@ -279,3 +279,14 @@ def test_icao_is_read_back_to_the_minute(lat_deg: float, lon_deg: float) -> None
     assert format_icao(read) == text
     assert abs(read.lat_deg - lat_deg) <= 0.5 / 60 + 1e-12
     assert abs(read.lon_deg - lon_deg) <= 0.5 / 60 + 1e-12
+
+
+@pytest.mark.parametrize(("text", "lon_deg"), [("180", 180.0), ("180°", 180.0), ("0", 0.0), ("000", 0.0)])
+def test_a_meridian_that_is_on_neither_side_needs_no_letter(text: str, lon_deg: float) -> None:
+    assert parse_longitude(text) == lon_deg
+
+
+def test_the_equator_needs_no_letter_and_180_is_no_latitude() -> None:
+    assert parse_latitude("0°") == 0.0
+    with pytest.raises(ParseError):
+        parse_latitude("180")

@@ -2,9 +2,9 @@
 
 from __future__ import annotations
 
-from pathlib import Path
 from typing import TYPE_CHECKING
 
+from tui.cli.arguments import add_output, medium_of
 from tui.cli.exit_codes import ExitCode
 from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
@@ -17,9 +17,8 @@ if TYPE_CHECKING:
     from navcore.plan.solve import Solution
     from navcore.prints.plotting_sheet import SheetOptions
 
-MEDIA = ("pdf", "svg", "json")
 PROJECTIONS = ("mercator", "stereographic", "lambert", "gnomonic")
-_SUFFIXES = {".pdf": "pdf", ".svg": "svg", ".json": "json"}
+_ENDINGS = {".pdf": "pdf", ".svg": "svg", ".json": "json"}
 _PAPERS = ("A4", "A3", "A2", "A1", "A0")
 _TRUE_SCALES = {"mercator": 1, "stereographic": 1, "lambert": 2, "gnomonic": 0}
 """How many latitudes of true scale each projection takes."""
@@ -61,10 +60,7 @@ def _add_arguments(parser: argparse.ArgumentParser) -> None:
     parser.add_argument(
         "--sheet", type=int, metavar="N", help="one sheet of a set, for svg and json; 0 is the index (svg)"
     )
-    parser.add_argument(
-        "--as", dest="medium", choices=MEDIA, help="how it is written; by the ending of -o FILE, else pdf, unless said"
-    )
-    parser.add_argument("-o", dest="file", metavar="FILE", help="write it to FILE, whole or not at all")
+    add_output(parser, _ENDINGS, "pdf")
 
 
 def _run(arguments: argparse.Namespace) -> ExitCode:
@@ -72,7 +68,7 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     from navcore.prints.plotting_sheet import plotting_sheets
     from tui.cli.plan_argument import open_plan
 
-    medium = arguments.medium or _medium_of(arguments.file)
+    medium = medium_of(arguments, _ENDINGS, "pdf")
     if medium == "pdf" and arguments.file is None and is_terminal():
         say("a PDF is nothing for a terminal to show; use -o FILE")
         return ExitCode.WRONG_USAGE
@@ -89,10 +85,6 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     if arguments.file is not None:
         say(_said(sheets))
     return ExitCode.DONE
-
-
-def _medium_of(file: str | None) -> str:
-    return "pdf" if file is None else _SUFFIXES.get(Path(file).suffix.lower(), "pdf")
 
 
 def _options(arguments: argparse.Namespace) -> SheetOptions:

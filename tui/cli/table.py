@@ -3,9 +3,9 @@
 from __future__ import annotations
 
 import shutil
-from pathlib import Path
 from typing import TYPE_CHECKING
 
+from tui.cli.arguments import add_output, medium_of
 from tui.cli.exit_codes import ExitCode
 from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
@@ -15,17 +15,13 @@ if TYPE_CHECKING:
 
     from navcore.plan.solve import Solution
 
-MEDIA = ("text", "pdf", "csv", "json", "markdown")
-_SUFFIXES = {".txt": "text", ".pdf": "pdf", ".csv": "csv", ".json": "json", ".md": "markdown"}
+_ENDINGS = {".txt": "text", ".pdf": "pdf", ".csv": "csv", ".json": "json", ".md": "markdown"}
 _PAPERS = ("A4", "Letter")
 
 
 def _add_arguments(parser: argparse.ArgumentParser) -> None:
     parser.add_argument("plan", metavar="PLAN", help="a plan file")
-    parser.add_argument(
-        "--as", dest="medium", choices=MEDIA, help="how it is written; by the ending of -o FILE, else text, unless said"
-    )
-    parser.add_argument("-o", dest="file", metavar="FILE", help="write it to FILE, whole or not at all")
+    add_output(parser, _ENDINGS, "text")
     parser.add_argument(
         "--columns",
         default="",
@@ -59,7 +55,7 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     from navcore.plan.solve import solve
     from tui.cli.plan_argument import open_plan
 
-    medium = arguments.medium or ("pdf" if arguments.read_back else _medium_of(arguments.file))
+    medium = medium_of(arguments, _ENDINGS, "pdf" if arguments.read_back else "text")
     if wrong := _wrong_usage(arguments, medium):
         say(wrong)
         return ExitCode.WRONG_USAGE
@@ -82,10 +78,6 @@ def _wrong_usage(arguments: argparse.Namespace, medium: str) -> str:
     if medium == "pdf" and arguments.file is None and is_terminal():
         return "a PDF is nothing for a terminal to show; use -o FILE"
     return ""
-
-
-def _medium_of(file: str | None) -> str:
-    return "text" if file is None else _SUFFIXES.get(Path(file).suffix.lower(), "text")
 
 
 def _terminal_width() -> int:

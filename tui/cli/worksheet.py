@@ -2,9 +2,9 @@
 
 from __future__ import annotations
 
-from pathlib import Path
 from typing import TYPE_CHECKING
 
+from tui.cli.arguments import add_output, medium_of
 from tui.cli.exit_codes import ExitCode
 from tui.cli.output import is_terminal, put, say
 from tui.cli.verb import Verb
@@ -15,17 +15,13 @@ if TYPE_CHECKING:
     from navcore.plan.solve import Solution
     from navcore.prints.worksheet import LegSheet
 
-MEDIA = ("text", "pdf", "json")
-_SUFFIXES = {".pdf": "pdf", ".json": "json"}
+_ENDINGS = {".txt": "text", ".pdf": "pdf", ".json": "json"}
 
 
 def _add_arguments(parser: argparse.ArgumentParser) -> None:
     parser.add_argument("plan", metavar="PLAN", help="a plan file")
     parser.add_argument("--leg", type=int, metavar="N", help="this leg alone, counted from 1; all of them unless said")
-    parser.add_argument(
-        "--as", dest="medium", choices=MEDIA, help="how it is written; by the ending of -o FILE, else text, unless said"
-    )
-    parser.add_argument("-o", dest="file", metavar="FILE", help="write it to FILE, whole or not at all")
+    add_output(parser, _ENDINGS, "text")
 
 
 def _run(arguments: argparse.Namespace) -> ExitCode:
@@ -33,7 +29,7 @@ def _run(arguments: argparse.Namespace) -> ExitCode:
     from navcore.prints.worksheet import make_worksheet
     from tui.cli.plan_argument import open_plan
 
-    medium = arguments.medium or _SUFFIXES.get(Path(arguments.file or "").suffix.lower(), "text")
+    medium = medium_of(arguments, _ENDINGS, "text")
     if medium == "pdf" and arguments.file is None and is_terminal():
         say("a PDF is nothing for a terminal to show; use -o FILE")
         return ExitCode.WRONG_USAGE
