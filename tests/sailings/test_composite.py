@@ -200,7 +200,7 @@ def test_the_north_pacific_composite_in_detail() -> None:
 def test_the_books_formulas_and_the_search_on_the_sphere_agree() -> None:
     chance = random.Random(1)
     worked = 0
-    while worked < 200:
+    while worked < 60:
         side = chance.choice((1.0, -1.0))
         start, end = (Position(side * chance.uniform(-30.0, 60.0), chance.uniform(-180.0, 180.0)) for _ in range(2))
         limit_deg = side * chance.uniform(max(side * start.lat_deg, side * end.lat_deg), 80.0)

@@ -295,7 +295,7 @@ STEPS = st.lists(
 )
 
 
-@settings(max_examples=40)
+@settings(max_examples=25)
 @given(
     st.lists(ANYWHERE, max_size=5), st.sampled_from(list(SheetKind)), STEPS, st.integers(0, 9), st.integers(1, 90),
     st.integers(1, 30),
