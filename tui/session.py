@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import errno
 import hashlib
 from typing import TYPE_CHECKING
 
@@ -78,8 +79,11 @@ class Session:
 
         Raises:
             PlanFileError: It can't be read in full; every problem is named.
-            OSError: It can't be read.
+            OSError: It can't be read, or is no plain file.
         """
+        if path.exists() and not path.is_file():
+            # A pipe would be waited for without end.
+            raise OSError(errno.EINVAL, "this is no plain file", str(path))
         data = read_bytes_capped(path, MAX_BYTES)
         read = read_plan(data, str(path))
         self._take_up(path, read.plan, _mark_of(data))

@@ -26,6 +26,7 @@ if TYPE_CHECKING:
 
 FORMS = "type a position, COURSE/DISTANCE from the waypoint above, or NAME BEARING/DISTANCE; a name after ;"
 _RUN = re.compile(r"(?P<name>.*?)\s*(?P<run>\d[^\s/]*\s*[A-Za-z]?\s*/\s*\d.*)")
+_LONGER_WAY_M = 1.0
 _ISO_6709 = re.compile(r"\s*[+-]\d")
 
 
@@ -155,11 +156,17 @@ def _named(text: str, run: re.Match[str], plan: Plan) -> Waypoint:
 def _reached(text: str, start: Position, run: tuple[float, float], plan: Plan) -> Position:
     course_deg, distance_nmi = run
     distance_m = distance_nmi * METRES_PER_NAUTICAL_MILE
-    if plan.line_of(Leg()) is Line.GREAT_CIRCLE:
+    is_great_circle = plan.line_of(Leg()) is Line.GREAT_CIRCLE
+    if is_great_circle:
         lat_deg, lon_deg, _ = great_circle.direct(*start, course_deg, distance_m, plan.figure)
     else:
         try:
             lat_deg, lon_deg = rhumb_line.direct(*start, course_deg, distance_m, plan.figure)
         except NoAnswerError as error:
             raise ParseError(text, (0, len(text)), str(error), "type a shorter distance, or the position") from error
-    return Position(float(lat_deg), float(lon_deg))
+    reached = Position(float(lat_deg), float(lon_deg))
+    lines = great_circle if is_great_circle else rhumb_line
+    if distance_m - float(lines.inverse(*start, *reached, plan.figure).distance_m) > _LONGER_WAY_M:
+        reason = "that run goes the longer way round, and the leg would be drawn the shorter way"
+        raise ParseError(text, (0, len(text)), reason, "type it in two runs, or the position")
+    return reached

@@ -101,3 +101,11 @@ def test_many_lines_become_waypoints_in_order_and_bad_ones_are_named() -> None:
     assert [point.name for point in plan.waypoints] == ["Salal Roads", "a", "b", "c", "Kuromatsu / Bay"]
     assert [(line.number, line.index) for line in unread] == [(3, 2), (4, 2), (7, 4)]
     assert "the line above could not be read" in str(unread[1].error)
+
+
+@pytest.mark.parametrize("trade", list(Trade))
+def test_a_run_that_goes_the_longer_way_round_is_refused_and_never_turned_about(trade: Trade) -> None:
+    plan = Plan((Waypoint("", Position(0.0, 0.0)),), trade=trade)
+    with pytest.raises(ParseError, match="longer way round"):
+        read_entry("090/12000", plan, 1)
+    assert abs(read_entry("090/10000", plan, 1).position.lon_deg) < 170.0

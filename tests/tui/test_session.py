@@ -1,5 +1,6 @@
 from __future__ import annotations
 
+import os
 import shutil
 from typing import TYPE_CHECKING
 
@@ -226,3 +227,10 @@ def test_without_a_folder_to_write_to_the_plan_still_opens(plan_file: Path, tmp_
     assert session.recovery.trouble
     assert session.change("add", _insert)
     assert session.state.recent() == ()
+
+
+@pytest.mark.skipif(not hasattr(os, "mkfifo"), reason="a named pipe is a thing of POSIX")
+def test_a_pipe_is_refused_and_not_waited_for(tmp_path: Path) -> None:
+    os.mkfifo(tmp_path / "pipe.toml")
+    with pytest.raises(OSError, match="no plain file"):
+        Session(State(tmp_path / "state")).open(tmp_path / "pipe.toml")

@@ -114,6 +114,9 @@ def _file_name(title: str) -> str:
 
 
 def _save_there(desk: Desk, path: Path, then: Callable[[], None] | None, *, over: bool = False) -> None:
+    if path.exists() and not path.is_file():
+        desk.say(f"not saved: {path} is no plain file; type the name of one", alert=True)
+        return
     try:
         desk.session.save_as(path, over_others=over)
     except WouldOverwriteError:
