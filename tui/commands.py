@@ -145,7 +145,7 @@ COMMANDS: tuple[Command, ...] = (
     Command("save", "Save", ("s", "ctrl+s"), _E, "writes the plan to its file, whole or not at all", "save"),
     Command("passage", "Passage page", ("f2", "escape"), _E, "waypoints and legs, and the working of the leg"),
     Command("chart", "Chart page", ("f3",), _E, "the plan on a chart, and what lies under the cross"),
-    Command("print", "Print page", ("f7",), _E, "the leg table as it will be printed"),
+    Command("print", "Print page", ("f7",), _E, "the leg table as text, and its prints to paper and file"),
     Command("page.next", "Next page", ("tab",), _E, "turns to the next page"),
     Command("help", "Keys", ("question_mark", "f1"), _E, "shows every key, page by page", "keys"),
     Command("caution", "Caution", ("exclamation_mark",), _E, "shows what this is no substitute for", "caution"),
